@@ -1,0 +1,203 @@
+"""Writes measurements.csv, the measured enthalpies of formation at 298.15 K, from the published tables.
+
+Run `python data/make_measurements.py` with the packages of requirements.txt. The output depends on the committed
+tables beside this file and on the two packages alone, so it comes out the same to the byte.
+"""
+
+import collections
+import csv
+import math
+import os
+import sys
+
+import chemicals
+
+import structures as st
+
+CRC = "Heat Capacity/CRC Standard Thermodynamic Properties of Chemical Substances.tsv"
+ATCT = {"g": "Reactions/ATcT 1.112 (g).tsv", "l": "Reactions/ATcT 1.112 (l).tsv"}
+PACKAGE = f"PyPI package chemicals {chemicals.__version__}"
+COLUMNS = (
+    "name smiles phase value_kj_per_mol uncertainty_kj_per_mol coverage_k u_kj_per_mol u_basis "
+    "source where_seen cas kind use note"
+).split()
+NOT_FITTED_KINDS = ("webbook_avg", "calc", "estimate", "memory")
+
+# Half a unit of the last printed digit on both sides, 0.05 + 0.05 kJ/mol, and 0.05 more for a calorie conversion.
+SAME_VALUE_KJ = 0.15
+# A value printed to 0.1 kcal/mol is known to 0.21 kJ/mol, and its partner to 0.05 kJ/mol.
+SAME_VALUE_KCAL = 0.26
+COVERAGE_STATED = 2
+KCAL_NOTE = "printed in kcal/mol"
+
+SOURCE_KEYS = {row["published_source"]: row["source"] for row in st.read_csv("source_keys.csv")}
+DEFAULTS = {row["kind"]: row for row in st.read_csv("default_uncertainties.csv")}
+REFERENCE = {row["cas"]: row["smiles"] for row in st.read_csv("reference_molecules.csv")}
+REFERENCE_KEYS = {st.molecule_key(smiles) for smiles in REFERENCE.values()}
+
+
+def package_table(path):
+    with open(os.path.join(os.path.dirname(chemicals.__file__), path), encoding="utf-8") as handle:
+        return list(csv.DictReader(handle, delimiter="\t"))
+
+
+def kj(joules):
+    """A figure in J/mol as kJ/mol with the digits that it was given in, never an exponent."""
+    text = f"{float(joules) / 1000:.3f}".rstrip("0")
+    return text + "0" if text.endswith(".") else text
+
+
+def row(name, smiles, phase, value, stated_u, source, where, cas, kind, note):
+    mol = st.parse(smiles)
+    filled = {
+        "name": name, "smiles": st.molecule_key(smiles), "phase": phase, "value_kj_per_mol": value,
+        "uncertainty_kj_per_mol": stated_u, "coverage_k": str(COVERAGE_STATED) if stated_u else "",
+        "source": source, "where_seen": where, "cas": cas, "kind": kind, "use": "fit", "note": note,
+    }
+    if stated_u:
+        u, basis = float(stated_u) / COVERAGE_STATED, "stated"
+    else:
+        carbons = st.counts_of(mol).get("C", 0)
+        default = DEFAULTS[kind]
+        u = math.hypot(float(default["u_kj_per_mol"]), carbons * float(default["u_per_carbon_kj_per_mol"]))
+        basis = f"default:{kind}"
+    filled["u_kj_per_mol"] = f"{u:.4g}"
+    filled["u_basis"] = basis
+    excluded = st.exclusion_for(cas, name, phase)
+    if filled["smiles"] in REFERENCE_KEYS:
+        filled["use"] = "reference"
+    elif excluded:
+        filled["use"] = excluded
+    elif kind in NOT_FITTED_KINDS:
+        filled["use"] = kind
+    elif "C" not in st.elements(mol):
+        filled["use"] = "not organic"
+    return filled
+
+
+def structure_of(cas, name):
+    """(SMILES, None) of a molecule that belongs in the table, or (None, why not)."""
+    if cas in REFERENCE:
+        return REFERENCE[cas], None
+    smiles = st.identify(cas, name)
+    mol = st.parse(smiles)
+    if mol is None:
+        return None, "no structure known"
+    if not st.is_molecule(mol):
+        return None, "not a neutral closed-shell molecule of the elements covered"
+    if "C" not in st.elements(mol):
+        return None, "no carbon"
+    if st.exclusion_for(cas, name, "") == "not written":
+        return None, "listed in exclusions.csv as another substance than the identifiers give"
+    return smiles, None
+
+
+def crc_rows(skipped):
+    for entry in package_table(CRC):
+        phases = {p: entry[f"Hf{p}"] for p in "slg" if entry[f"Hf{p}"]}
+        if not phases:
+            continue
+        smiles, why_not = structure_of(entry["CAS"], entry["Chemical"])
+        if why_not:
+            skipped[f"crc2014: {why_not}"] += 1
+            continue
+        for phase, value in phases.items():
+            yield row(entry["Chemical"], smiles, phase, kj(value), "", "crc2014", f"{PACKAGE}: {CRC}",
+                      entry["CAS"], "handbook", "")
+
+
+def atct_rows(skipped):
+    for phase, path in ATCT.items():
+        for entry in package_table(path):
+            formula, value = entry["Formula"], entry[f"Hf{phase}"]
+            smiles, why_not = structure_of(entry["CAS"], entry["Chemical"])
+            counts = st.formula_counts(formula)
+            if not why_not and (counts is None or counts != st.counts_of(st.parse(smiles))):
+                why_not = "an ion or open shell: the table's formula is not that of a closed-shell structure"
+            if why_not:
+                skipped[f"atct-1.112 ({phase}): {why_not}"] += 1
+                continue
+            stated = kj(entry["uncertainty"]) if float(entry["uncertainty"]) else ""
+            made = row(entry["Chemical"], smiles, phase, kj(value), stated, "atct-1.112", f"{PACKAGE}: {path}",
+                       entry["CAS"], "evaluated", f"table formula {formula}")
+            if not stated:  # the elements in their reference state are zero by definition
+                made.update(uncertainty_kj_per_mol="0.0", coverage_k=str(COVERAGE_STATED), u_kj_per_mol="0", u_basis="stated")
+            yield made
+
+
+def strained_rows(already, skipped):
+    """Rows of enthalpies_strained.csv; a row that the tables above have given already is not written twice."""
+    printed = {(r["source"], r["cas"], r["phase"], r["value_kj_per_mol"]) for r in already}
+    for entry in st.read_csv("enthalpies_strained.csv"):
+        source = SOURCE_KEYS[entry["published_source"]]
+        where = entry["where_seen"]
+        cas = where.split("(CAS ")[1].rstrip(")") if "(CAS " in where else ""
+        if (source, cas, entry["phase"], kj(1000 * float(entry["value"]))) in printed:
+            skipped["enthalpies_strained.csv: the same printed row as in the handbook or ATcT table"] += 1
+            continue
+        smiles = st.override_for(cas, entry["molecule"]) or entry["smiles"]
+        if st.parse(smiles) is None:
+            skipped["enthalpies_strained.csv: no structure"] += 1
+            continue
+        printed_in = KCAL_NOTE if "kcal/mol)" in entry["published_source"] + where else ""
+        note = "; ".join(text for text in (printed_in, entry["flag"].strip(" |"), entry["note"]) if text)
+        yield row(entry["molecule"], smiles, entry["phase"], kj(1000 * float(entry["value"])), entry["uncertainty"],
+                  source, where, cas, entry["kind"], note)
+
+
+def same_value(one, other):
+    kcal = any(r["note"].startswith(KCAL_NOTE) for r in (one, other))
+    limit = SAME_VALUE_KCAL if kcal else SAME_VALUE_KJ
+    return abs(float(one["value_kj_per_mol"]) - float(other["value_kj_per_mol"])) <= limit + 1e-9
+
+
+def mark_duplicates(rows):
+    """Equal values share a primary source: the one with the best stated uncertainty stays, the others say whose they are."""
+    groups = collections.defaultdict(list)
+    for r in rows:
+        if r["use"] in ("fit", "reference"):
+            groups[r["smiles"], r["phase"]].append(r)
+    for group in groups.values():
+        group.sort(key=lambda r: (r["u_basis"] != "stated", float(r["u_kj_per_mol"]), r["source"], r["name"], r["value_kj_per_mol"]))
+        kept = []
+        for r in group:
+            twin = next((k for k in kept if same_value(k, r)), None)
+            if twin:
+                r["use"] = f"duplicate of {twin['source']}"
+            elif kept and r["use"] == "reference":
+                r["use"] = f"superseded by {kept[0]['source']}"
+            else:
+                kept.append(r)
+
+
+def measurements():
+    skipped = collections.Counter()
+    rows = list(crc_rows(skipped)) + list(atct_rows(skipped))
+    rows += list(strained_rows(rows, skipped))
+    mark_duplicates(rows)
+    rows.sort(key=lambda r: tuple(r[c] for c in ("smiles", "phase", "source", "name", "cas", "value_kj_per_mol")))
+    return rows, skipped
+
+
+def summary(rows, skipped):
+    for title, column in (("source and phase", ("source", "phase")), ("kind and phase", ("kind", "phase")), ("phase and use", ("phase", "use"))):
+        print(f"rows by {title}", file=sys.stderr)
+        for key, count in sorted(collections.Counter(tuple(r[c] for c in column) for r in rows).items()):
+            print(f"  {count:5d}  {' | '.join(key)}", file=sys.stderr)
+    for why, count in sorted(skipped.items()):
+        print(f"not written {count:5d}  {why}", file=sys.stderr)
+    fitted = {r["smiles"] for r in rows if r["phase"] == "g" and r["use"] == "fit"}
+    print(f"{len(rows)} rows; {len(fitted)} molecules with a fitted gas row", file=sys.stderr)
+
+
+def main():
+    rows, skipped = measurements()
+    with open(st.HERE / "measurements.csv", "w", newline="", encoding="utf-8") as handle:
+        writer = csv.DictWriter(handle, COLUMNS, lineterminator="\n")
+        writer.writeheader()
+        writer.writerows(rows)
+    summary(rows, skipped)
+
+
+if __name__ == "__main__":
+    main()
