@@ -1,0 +1,26 @@
+//! The molecular graph and what is perceived on it: valence, Kekulé structure, rings, aromaticity.
+
+mod aromaticity;
+mod element;
+mod error;
+mod graph;
+mod kekule;
+mod matching;
+#[expect(
+    clippy::module_inception,
+    reason = "the file holds the type of that name"
+)]
+mod molecule;
+mod normalise;
+mod rings;
+mod valence;
+
+pub use element::Element;
+pub use error::MoleculeError;
+pub use graph::{
+    Atom, Bond, BondOrder, DoubleBondStereo, Ligand, MAX_DEGREE, MoleculeBuilder, Neighbour,
+    TetrahedralStereo,
+};
+pub use molecule::Molecule;
+pub use rings::{RingSet, RingSizes};
+pub use valence::implicit_hydrogens;

@@ -1,0 +1,1 @@
+//! Case files: the schema, reading with errors that point at the line, the JSON Schema for editors.

@@ -1,0 +1,3 @@
+//! The `tautring` command.
+
+fn main() {}

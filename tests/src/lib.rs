@@ -1,0 +1,1 @@
+//! Tables and readers shared by the checks of tautring against the outside.
