@@ -5,6 +5,7 @@ mod element;
 mod error;
 mod graph;
 mod kekule;
+mod matching;
 #[expect(
     clippy::module_inception,
     reason = "the file holds the type of that name"
@@ -22,3 +23,4 @@ pub use graph::{
 };
 pub use molecule::Molecule;
 pub use rings::{RingSet, RingSizes};
+pub use valence::implicit_hydrogens;
