@@ -4,4 +4,5 @@
 //! structures.
 
 pub mod case;
+pub mod fit;
 pub mod structure;

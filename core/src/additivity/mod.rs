@@ -1,1 +1,22 @@
-//! To come.
+//! Additivity: enthalpies of formation as a linear model of counted features, with a full covariance.
+//!
+//! y = Σ over levels l of X_l β_l + δ + ε, with β_l ~ N(0, τ_l² I) (correlated between neighbouring ring sizes in the
+//! smooth levels), δ a heavy-tailed deviation of the molecule and ε the heavy-tailed error of a measurement.
+
+pub mod cholesky;
+mod error;
+mod features;
+mod key;
+mod level;
+mod levels;
+mod model;
+mod prior;
+mod skeleton;
+
+pub use error::AdditivityError;
+pub use features::{Features, Term};
+pub use key::Key;
+pub use level::Level;
+pub use levels::{count, count_strain};
+pub use model::{Estimate, MAX_LEFT_OUT, Model};
+pub use prior::Prior;

@@ -1,0 +1,112 @@
+//! The levels of the additivity, coarse to fine.
+
+/// A family of countable features of a molecular graph that share one prior variance.
+///
+/// The ring levels together are the conventional strain of a molecule.
+#[derive(Clone, Copy, Debug, PartialEq, Eq, PartialOrd, Ord, Hash)]
+#[cfg_attr(feature = "serde", derive(serde::Serialize))]
+#[repr(u8)]
+pub enum Level {
+    /// Atoms by element.
+    Element,
+    /// Atoms by type and number of hydrogens.
+    Atom,
+    /// Bonds by the types of their two atoms and their order.
+    Bond,
+    /// Groups after Benson: a central atom with its neighbours.
+    Group,
+    /// Pairs of adjacent groups.
+    GroupPair,
+    /// A group with the groups around it.
+    Shell,
+    /// Pairs of atoms two bonds apart, with the atom between.
+    Geminal,
+    /// Pairs of atoms three bonds apart across a bond that is in no ring.
+    Vicinal,
+    /// Unavoidable gauche contacts across a bond that is in no ring.
+    Gauche,
+    /// Pairs of branched atoms that bring substituents five atoms apart face to face.
+    OneFive,
+    /// Substituents on one side of a double bond.
+    Cis,
+    /// Substituents in ortho, meta and para position of an aromatic ring.
+    AromaticPair,
+    /// Aromatic atoms by the aromatic rings that they are in.
+    AromaticRing,
+    /// Rings by size, smooth in size.
+    RingSize,
+    /// Rings by size and composition, smooth in size.
+    RingClass,
+    /// Ring atoms by the sizes of the rings that they are in.
+    RingAtom,
+    /// Ring bonds by the sizes of the rings that they are in.
+    RingBond,
+    /// Pairs of rings by the atoms that they share.
+    RingFusion,
+    /// Pairs of atoms three bonds apart across a ring bond.
+    RingVicinal,
+    /// Relative configuration in rings.
+    RingConfiguration,
+}
+
+impl Level {
+    /// Every level, coarse to fine.
+    pub const ALL: [Self; 20] = [
+        Self::Element,
+        Self::Atom,
+        Self::Bond,
+        Self::Group,
+        Self::GroupPair,
+        Self::Shell,
+        Self::Geminal,
+        Self::Vicinal,
+        Self::Gauche,
+        Self::OneFive,
+        Self::Cis,
+        Self::AromaticPair,
+        Self::AromaticRing,
+        Self::RingSize,
+        Self::RingClass,
+        Self::RingAtom,
+        Self::RingBond,
+        Self::RingFusion,
+        Self::RingVicinal,
+        Self::RingConfiguration,
+    ];
+
+    /// Name of the level, as reports print it.
+    pub const fn name(self) -> &'static str {
+        match self {
+            Self::Element => "element",
+            Self::Atom => "atom",
+            Self::Bond => "bond",
+            Self::Group => "group",
+            Self::GroupPair => "group pair",
+            Self::Shell => "shell",
+            Self::Geminal => "geminal pair",
+            Self::Vicinal => "vicinal pair",
+            Self::Gauche => "gauche",
+            Self::OneFive => "1,5 contact",
+            Self::Cis => "cis",
+            Self::AromaticPair => "aromatic pair",
+            Self::AromaticRing => "aromatic ring",
+            Self::RingSize => "ring size",
+            Self::RingClass => "ring class",
+            Self::RingAtom => "ring atom",
+            Self::RingBond => "ring bond",
+            Self::RingFusion => "ring fusion",
+            Self::RingVicinal => "ring vicinal pair",
+            Self::RingConfiguration => "ring configuration",
+        }
+    }
+
+    /// Whether the level counts as ring strain.
+    pub const fn is_strain(self) -> bool {
+        self as u8 >= Self::RingSize as u8
+    }
+
+    /// Whether the level's features are correlated between neighbouring ring sizes.
+    pub const fn is_smooth(self) -> bool {
+        matches!(self, Self::RingSize | Self::RingClass)
+    }
+}

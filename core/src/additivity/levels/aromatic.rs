@@ -1,0 +1,64 @@
+//! Aromatic rings: substituents ortho, meta and para to each other; fusion.
+
+use super::composition::sorted;
+use crate::additivity::Level;
+use crate::additivity::error::AdditivityError;
+use crate::additivity::features::Features;
+use crate::additivity::key::Key;
+use crate::additivity::skeleton::{Skeleton, is_aromatic_ring};
+
+/// Counts substituent pairs on aromatic rings, aromatic atoms by their rings, and aromatic rings by composition.
+pub(super) fn count<const A: usize, const B: usize, const F: usize>(
+    skeleton: &Skeleton<A, B>,
+    features: &mut Features<F>,
+) -> Result<(), AdditivityError> {
+    for ring in skeleton.molecule.rings().iter() {
+        if !is_aromatic_ring(skeleton.molecule, ring) {
+            continue;
+        }
+        let size = ring.len();
+        for (i, &first) in ring.iter().enumerate() {
+            for (j, &second) in ring.iter().enumerate().skip(i + 1) {
+                let apart = (j - i).min(size - (j - i)) as u64;
+                let (first, second) = (usize::from(first), usize::from(second));
+                for a in position(skeleton, ring, first).into_iter().flatten() {
+                    for b in position(skeleton, ring, second).into_iter().flatten() {
+                        let [low, high] = sorted(a, b);
+                        let key = Key::new(Level::AromaticPair, &[low, high, apart, size as u64]);
+                        features.add(key, 1.0)?;
+                    }
+                }
+            }
+        }
+    }
+    for (_, site) in skeleton.sites().filter(|(_, s)| s.aromatic_rings > 0) {
+        let tokens = [site.kind.token(), u64::from(site.aromatic_rings)];
+        features.add(Key::new(Level::AromaticRing, &tokens), 1.0)?;
+    }
+    Ok(())
+}
+
+/// What stands at a position of an aromatic ring: its substituent outside the ring, and the atom itself when it is no carbon.
+fn position<const A: usize, const B: usize>(
+    skeleton: &Skeleton<A, B>,
+    ring: &[u16],
+    atom: usize,
+) -> [Option<u64>; 2] {
+    const RING_ATOM: u64 = 1 << 32;
+    const FUSED: u64 = 1 << 33;
+    let substituent = skeleton
+        .heavy_neighbours(atom)
+        .find(|(n, _)| !ring.contains(&n.atom))
+        .map(|(n, site)| {
+            if skeleton.molecule.is_aromatic_bond(usize::from(n.bond)) {
+                FUSED
+            } else {
+                site.kind.token()
+            }
+        });
+    let own = skeleton
+        .site(atom)
+        .filter(|s| s.kind.element_token() != crate::molecule::Element::C as u64)
+        .map(|s| s.kind.token() << 1 | u64::from(s.hydrogens > 0) | RING_ATOM);
+    [substituent, own]
+}

@@ -1,0 +1,15 @@
+//! The fit: from measured enthalpies of formation to the coefficient tables of the core.
+
+mod dataset;
+mod inference;
+mod matrices;
+mod tables;
+mod validation;
+
+pub use dataset::{Dataset, DatasetError, HostFeatures, Measurement, Row};
+pub use inference::{Hyperparameters, Posterior, search};
+pub use matrices::LevelMatrices;
+pub use tables::{TableError, Tables};
+pub use validation::{
+    COVERAGE_FACTOR, LeftOut, Summary, describe, leave_out, left_out_csv, summarise,
+};

@@ -1,0 +1,226 @@
+//! How well the model predicts what it has not seen: each constitution left out in closed form.
+
+use std::fmt::Write as _;
+
+use tautring_core::additivity::{Level, cholesky};
+use tautring_core::molecule::Element;
+
+use super::dataset::{Dataset, Row};
+use super::inference::{Posterior, entry};
+
+/// One measurement predicted from all measurements of other molecules.
+#[derive(Clone, Copy, Debug)]
+pub struct LeftOut {
+    /// Index of the measurement.
+    pub row: usize,
+    /// Measured minus predicted, kJ/mol.
+    pub error_kj_per_mol: f64,
+    /// Standard uncertainty of the prediction for the true value, kJ/mol.
+    pub u_kj_per_mol: f64,
+    /// Standard uncertainty of the prediction for a new measurement of the same quality, kJ/mol.
+    pub u_new_measurement_kj_per_mol: f64,
+}
+
+/// Predicts each measurement without all measurements of its constitution.
+///
+/// With S the left-out rows, measured minus predicted is (K⁻¹_SS)⁻¹ α_S and its covariance (K⁻¹_SS)⁻¹. The weights of the heavy
+/// tails and the prior are those of all measurements.
+pub fn leave_out(data: &Dataset, posterior: &Posterior) -> Vec<LeftOut> {
+    let nu = posterior.prior.degrees_of_freedom;
+    let widening = nu / (nu - 2.0);
+    let mut result: Vec<LeftOut> = data
+        .constitutions
+        .iter()
+        .flat_map(|set| {
+            let m = set.len();
+            let mut block = Vec::with_capacity(cholesky::packed_len(m));
+            for (at, &i) in set.iter().enumerate() {
+                block.extend(set[..=at].iter().map(|&j| posterior.inverse[entry(i, j)]));
+            }
+            let positive = cholesky::factorise(&mut block).is_ok();
+            assert!(
+                positive,
+                "a diagonal block of a positive definite matrix is positive definite"
+            );
+            let solve = |mut b: Vec<f64>| {
+                cholesky::solve_lower(&block, &mut b);
+                cholesky::solve_upper(&block, &mut b);
+                b
+            };
+            let errors = solve(set.iter().map(|&i| posterior.alpha[i]).collect());
+            (0..m)
+                .map(|at| {
+                    let row = set[at];
+                    let mut unit = vec![0.0; m];
+                    unit[at] = 1.0;
+                    let total = solve(unit)[at];
+                    let molecule = data.rows[row].molecule;
+                    let model = total
+                        - posterior.error_variance[row]
+                        - posterior.deviation_variance[molecule];
+                    let truth = model.max(0.0) + posterior.prior.deviation_variance();
+                    let error = data.rows[row].u_kj_per_mol.powi(2) * widening;
+                    LeftOut {
+                        row,
+                        error_kj_per_mol: errors[at],
+                        u_kj_per_mol: truth.sqrt(),
+                        u_new_measurement_kj_per_mol: (truth + error).sqrt(),
+                    }
+                })
+                .collect::<Vec<_>>()
+        })
+        .collect();
+    result.sort_by_key(|l| l.row);
+    result
+}
+
+/// Errors of a set of left-out measurements.
+#[derive(Clone, Copy, Debug)]
+pub struct Summary {
+    /// How many.
+    pub count: usize,
+    /// Median absolute error, kJ/mol.
+    pub median_kj_per_mol: f64,
+    /// Mean absolute error, kJ/mol.
+    pub mean_kj_per_mol: f64,
+    /// Root of the mean squared error, kJ/mol.
+    pub root_mean_square_kj_per_mol: f64,
+    /// Share of the measurements inside their 95 % interval.
+    pub coverage: f64,
+}
+
+/// Factor from the standard uncertainty to the 95 % interval.
+pub const COVERAGE_FACTOR: f64 = 1.96;
+
+/// Summarises a set of left-out measurements; `None` for an empty one.
+pub fn summarise<'a>(errors: impl IntoIterator<Item = &'a LeftOut>) -> Option<Summary> {
+    let mut sizes = Vec::new();
+    let mut inside = 0_usize;
+    for e in errors {
+        let size = e.error_kj_per_mol.abs();
+        inside += usize::from(size <= COVERAGE_FACTOR * e.u_new_measurement_kj_per_mol);
+        sizes.push(size);
+    }
+    if sizes.is_empty() {
+        return None;
+    }
+    sizes.sort_by(f64::total_cmp);
+    let count = sizes.len();
+    let n = count as f64;
+    Some(Summary {
+        count,
+        median_kj_per_mol: f64::midpoint(sizes[(count - 1) / 2], sizes[count / 2]),
+        mean_kj_per_mol: sizes.iter().sum::<f64>() / n,
+        root_mean_square_kj_per_mol: (sizes.iter().map(|s| s * s).sum::<f64>() / n).sqrt(),
+        coverage: inside as f64 / n,
+    })
+}
+
+/// The families whose left-out errors are printed: name and whether a measurement belongs to it.
+type Family = (&'static str, fn(&Row) -> bool);
+
+const FAMILIES: [Family; 9] = [
+    ("all", |_| true),
+    ("hydrocarbons", |r| {
+        elements_only(r, &[Element::C, Element::H])
+    }),
+    ("acyclic hydrocarbons", |r| {
+        elements_only(r, &[Element::C, Element::H]) && r.structure.molecule.rings().is_empty()
+    }),
+    ("oxygen", |r| contains(r, Element::O)),
+    ("nitrogen", |r| contains(r, Element::N)),
+    ("sulfur", |r| contains(r, Element::S)),
+    ("halogens", |r| {
+        [Element::F, Element::Cl, Element::Br, Element::I]
+            .into_iter()
+            .any(|e| contains(r, e))
+    }),
+    ("three- and four-membered rings", |r| {
+        r.structure
+            .molecule
+            .rings()
+            .iter()
+            .any(|ring| ring.len() < 5)
+    }),
+    ("non-aromatic ring", |r| {
+        r.features
+            .terms()
+            .iter()
+            .any(|t| t.key.level() == Some(Level::RingSize))
+    }),
+];
+
+fn contains(row: &Row, element: Element) -> bool {
+    row.structure
+        .molecule
+        .atoms()
+        .iter()
+        .any(|a| a.element == element)
+}
+
+fn elements_only(row: &Row, elements: &[Element]) -> bool {
+    row.structure
+        .molecule
+        .atoms()
+        .iter()
+        .all(|a| elements.contains(&a.element))
+}
+
+/// Prior uncertainty up to which an estimate counts as supported, kJ/mol.
+pub const SUPPORTED_KJ_PER_MOL: f64 = 8.0;
+
+/// The table of left-out errors by family, as text.
+pub fn describe(data: &Dataset, errors: &[LeftOut]) -> String {
+    let mut text = String::from(
+        "Left-out errors, kJ/mol (each constitution predicted from all others; coverage of the 95 % interval for a new measurement)\n",
+    );
+    let _ = writeln!(
+        text,
+        "{:34}{:>6}{:>8}{:>8}{:>8}{:>10}",
+        "family", "n", "median", "mean", "rms", "coverage"
+    );
+    for supported in [false, true] {
+        for (name, belongs) in FAMILIES {
+            let chosen = errors.iter().filter(|e| {
+                belongs(&data.rows[e.row]) && (!supported || e.u_kj_per_mol <= SUPPORTED_KJ_PER_MOL)
+            });
+            if let Some(s) = summarise(chosen) {
+                let mark = if supported { ", u at most 8" } else { "" };
+                let _ = writeln!(
+                    text,
+                    "{:34}{:>6}{:>8.2}{:>8.2}{:>8.2}{:>9.1}%",
+                    format!("{name}{mark}"),
+                    s.count,
+                    s.median_kj_per_mol,
+                    s.mean_kj_per_mol,
+                    s.root_mean_square_kj_per_mol,
+                    100.0 * s.coverage
+                );
+            }
+        }
+    }
+    text
+}
+
+/// The left-out errors as a table: one line for each measurement.
+pub fn left_out_csv(data: &Dataset, errors: &[LeftOut]) -> String {
+    let mut text = String::from(
+        "name,smiles,source,measured_kj_per_mol,predicted_kj_per_mol,error_kj_per_mol,u_kj_per_mol,u_new_measurement_kj_per_mol\n",
+    );
+    for e in errors {
+        let m = &data.rows[e.row].measurement;
+        let _ = writeln!(
+            text,
+            "\"{}\",{},{},{},{:.2},{:.2},{:.2},{:.2}",
+            m.name,
+            m.smiles,
+            m.source,
+            m.value_kj_per_mol,
+            m.value_kj_per_mol - e.error_kj_per_mol,
+            e.error_kj_per_mol,
+            e.u_kj_per_mol,
+            e.u_new_measurement_kj_per_mol
+        );
+    }
+    text
+}
