@@ -179,6 +179,14 @@ def measurements():
     return rows, skipped
 
 
+def handbook_against_evaluated(rows):
+    """Sorted absolute gas-phase differences handbook less ATcT, kJ/mol: what the default for the handbook rests on."""
+    evaluated = {r["smiles"]: float(r["value_kj_per_mol"]) for r in rows
+                 if (r["source"], r["phase"], r["use"]) == ("atct-1.112", "g", "fit")}
+    return sorted(abs(float(r["value_kj_per_mol"]) - evaluated[r["smiles"]]) for r in rows
+                  if (r["source"], r["phase"]) == ("crc2014", "g") and r["smiles"] in evaluated)
+
+
 def summary(rows, skipped):
     for title, column in (("source and phase", ("source", "phase")), ("kind and phase", ("kind", "phase")), ("phase and use", ("phase", "use"))):
         print(f"rows by {title}", file=sys.stderr)
@@ -186,6 +194,11 @@ def summary(rows, skipped):
             print(f"  {count:5d}  {' | '.join(key)}", file=sys.stderr)
     for why, count in sorted(skipped.items()):
         print(f"not written {count:5d}  {why}", file=sys.stderr)
+    apart = handbook_against_evaluated(rows)
+    unequal = [d for d in apart if d > SAME_VALUE_KJ]
+    for title, d in (("all", apart), ("unequal", unequal)):
+        print(f"handbook against ATcT, gas, {title}: {len(d)} molecules, 68 % below {d[int(0.68 * (len(d) - 1))]:.2f} kJ/mol, "
+              f"{sum(x > 7 for x in d)} above 7", file=sys.stderr)
     fitted = {r["smiles"] for r in rows if r["phase"] == "g" and r["use"] == "fit"}
     print(f"{len(rows)} rows; {len(fitted)} molecules with a fitted gas row", file=sys.stderr)
 
