@@ -5,4 +5,5 @@
 
 pub mod case;
 pub mod fit;
+pub mod review;
 pub mod structure;

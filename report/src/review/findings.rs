@@ -1,0 +1,195 @@
+//! What a review finds for one substance. Units are in the names; `u` is a standard uncertainty.
+
+use serde::Serialize;
+
+/// A value with its standard uncertainty in one unit, kJ/mol.
+#[derive(Clone, Copy, Debug, PartialEq, Serialize)]
+pub struct Quantity {
+    /// The value, kJ/mol.
+    pub value_kj_per_mol: f64,
+    /// Standard uncertainty, kJ/mol.
+    pub u_kj_per_mol: f64,
+}
+
+/// What a reported value rests on.
+#[derive(Clone, Copy, Debug, PartialEq, Eq, Serialize)]
+#[serde(rename_all = "lowercase")]
+pub enum Basis {
+    /// Published or case-file measurements of the molecule itself.
+    Measured,
+    /// The additivity.
+    Estimated,
+}
+
+/// A measured enthalpy of formation of the molecule itself.
+#[derive(Clone, Debug, Serialize)]
+pub struct MeasuredEnthalpy {
+    /// The value with its standard uncertainty.
+    #[serde(flatten)]
+    pub quantity: Quantity,
+    /// Bibliography key of a published value, or the source text of the case file.
+    pub source: String,
+    /// Whether the case file states it (else it comes from the data of the project).
+    pub from_case: bool,
+}
+
+/// How a measured value agrees with the estimate that leaves it out.
+#[derive(Clone, Copy, Debug, PartialEq, Eq, Serialize)]
+#[serde(rename_all = "snake_case")]
+pub enum Agreement {
+    /// They differ by no more than their combined expanded uncertainty.
+    Agrees,
+    /// They differ by more; the more hazardous of the two is used until someone settles it.
+    Disagrees,
+    /// They differ by more, and the case file says which is right and why.
+    Settled,
+}
+
+/// A measured value beside the estimate made without it.
+#[derive(Clone, Debug, Serialize)]
+pub struct Comparison {
+    /// The measured value.
+    pub measured: MeasuredEnthalpy,
+    /// The estimate without any measurement of the molecule.
+    pub blind: Quantity,
+    /// Measured minus estimated, kJ/mol.
+    pub difference_kj_per_mol: f64,
+    /// Combined expanded uncertainty (95 %) of the difference, kJ/mol.
+    pub expanded_kj_per_mol: f64,
+    /// The verdict.
+    pub agreement: Agreement,
+    /// What the case file says when it settles a disagreement: by whom and why.
+    pub settled_by: Option<String>,
+}
+
+/// The enthalpy of formation in the gas phase at 298.15 K.
+#[derive(Clone, Debug, Serialize)]
+pub struct FormationEnthalpy {
+    /// The value that the report uses.
+    #[serde(flatten)]
+    pub quantity: Quantity,
+    /// What it rests on.
+    pub basis: Basis,
+    /// Expanded uncertainty (95 %), kJ/mol.
+    pub expanded_kj_per_mol: f64,
+    /// The estimate of the additivity; it leans on the molecule's own measurements where there are any and nobody asked to leave them out.
+    pub estimate: Quantity,
+    /// The molecule's own measurements beside the estimate made without them.
+    pub comparisons: Vec<Comparison>,
+    /// The measurements that the estimate leans on, by absolute weight, until they carry 80 % of it.
+    pub evidence: Vec<Evidence>,
+    /// Share of the absolute weight that `evidence` carries.
+    pub evidence_share: f64,
+}
+
+/// A measurement that an estimate leans on.
+#[derive(Clone, Debug, Serialize)]
+pub struct Evidence {
+    /// Name of the compound.
+    pub molecule: String,
+    /// Its structure.
+    pub smiles: String,
+    /// Its weight in the estimate: kJ/mol of estimate for one kJ/mol of measured value.
+    pub weight: f64,
+    /// The measured value, kJ/mol.
+    pub value_kj_per_mol: f64,
+    /// Its standard uncertainty, kJ/mol.
+    pub u_kj_per_mol: f64,
+    /// Bibliography key.
+    pub source: String,
+}
+
+/// The strain of one ring system.
+#[derive(Clone, Debug, Serialize)]
+pub struct RingStrain {
+    /// Atoms of the ring system, indices from 0 in the order of the input.
+    pub atoms: Vec<usize>,
+    /// Sizes of its relevant rings, ascending.
+    pub sizes: Vec<usize>,
+    /// Its strain.
+    #[serde(flatten)]
+    pub quantity: Quantity,
+}
+
+/// The strain of a molecule.
+#[derive(Clone, Debug, Serialize)]
+pub struct Strain {
+    /// Sum of the ring levels.
+    #[serde(flatten)]
+    pub quantity: Quantity,
+    /// The same, kcal/mol (thermochemical).
+    pub value_kcal_per_mol: f64,
+    /// The same per mass, J/g.
+    pub j_per_g: f64,
+    /// Standard uncertainty per mass, J/g.
+    pub u_j_per_g: f64,
+    /// Name of the convention.
+    pub convention: &'static str,
+    /// For a measured molecule: measured enthalpy minus the strain-free sum.
+    pub measured_minus_strain_free: Option<Quantity>,
+    /// The strain of each ring system.
+    pub ring_systems: Vec<RingStrain>,
+}
+
+/// All that is found for one substance.
+#[derive(Clone, Debug, Serialize)]
+pub struct SubstanceReview {
+    /// Name in the case file, or the structure as given.
+    pub name: String,
+    /// The structure as given.
+    pub input: String,
+    /// Formula in Hill order.
+    pub formula: String,
+    /// Molar mass, g/mol.
+    pub molar_mass_g_per_mol: f64,
+    /// Oxygen balance to CO2, H2O, N2, SO2 and HX, %.
+    pub oxygen_balance_percent: f64,
+    /// Gas-phase enthalpy of formation.
+    pub gas: FormationEnthalpy,
+    /// Strain.
+    pub strain: Strain,
+    /// Relevant rings: atoms in ring order, indices from 0.
+    pub rings: Vec<Vec<usize>>,
+    /// Plain-language warnings, most important first.
+    pub flags: Vec<String>,
+    /// Where the structure was drawn in the input, Å, if it was.
+    #[serde(skip)]
+    pub structure: crate::structure::Structure,
+}
+
+/// A published value that the program recomputes.
+#[derive(Clone, Debug, Serialize)]
+pub struct CheckValue {
+    /// Short name.
+    pub id: String,
+    /// What is checked.
+    pub quantity: String,
+    /// Molecule or reaction.
+    pub subject: String,
+    /// The published value.
+    pub published: f64,
+    /// Unit of it.
+    pub unit: String,
+    /// The value recomputed now.
+    pub computed: f64,
+    /// Largest difference that still agrees.
+    pub tolerance: f64,
+    /// Why that one.
+    pub tolerance_reason: String,
+    /// Bibliography key, or `common practice`.
+    pub source: String,
+    /// How the source was seen.
+    pub source_seen: String,
+    /// The verdict.
+    pub outcome: CheckOutcome,
+}
+
+/// Whether a recomputed value agrees with the published one.
+#[derive(Clone, Copy, Debug, PartialEq, Eq, Serialize)]
+#[serde(rename_all = "snake_case")]
+pub enum CheckOutcome {
+    /// Within the tolerance.
+    Agrees,
+    /// Outside it.
+    Off,
+}
