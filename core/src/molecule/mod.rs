@@ -3,7 +3,10 @@
 mod aromaticity;
 mod element;
 mod error;
+mod formula;
+mod fragments;
 mod graph;
+mod hydrogens;
 mod kekule;
 mod matching;
 #[expect(
@@ -13,10 +16,12 @@ mod matching;
 mod molecule;
 mod normalise;
 mod rings;
+mod spelling;
 mod valence;
 
 pub use element::Element;
 pub use error::MoleculeError;
+pub use formula::Formula;
 pub use graph::{
     Atom, Bond, BondOrder, DoubleBondStereo, Ligand, MAX_DEGREE, MoleculeBuilder, Neighbour,
     TetrahedralStereo,
