@@ -1,6 +1,8 @@
 //! The molecular graph and what is perceived on it: valence, Kekulé structure, rings, aromaticity.
 
 mod aromaticity;
+mod cycle_families;
+mod cycle_space;
 mod element;
 mod error;
 mod graph;
@@ -11,6 +13,7 @@ mod kekule;
 )]
 mod molecule;
 mod normalise;
+mod ring_systems;
 mod rings;
 mod valence;
 
@@ -21,4 +24,5 @@ pub use graph::{
     TetrahedralStereo,
 };
 pub use molecule::Molecule;
+pub use ring_systems::RingSystems;
 pub use rings::{RingSet, RingSizes};
