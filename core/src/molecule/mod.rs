@@ -13,6 +13,7 @@ mod kekule;
 )]
 mod molecule;
 mod normalise;
+mod pi_electrons;
 mod ring_systems;
 mod rings;
 mod valence;
