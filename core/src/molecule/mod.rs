@@ -1,6 +1,8 @@
 //! The molecular graph and what is perceived on it: valence, Kekulé structure, rings, aromaticity.
 
 mod aromaticity;
+mod cycle_families;
+mod cycle_space;
 mod element;
 mod error;
 mod formula;
@@ -15,6 +17,8 @@ mod matching;
 )]
 mod molecule;
 mod normalise;
+mod pi_electrons;
+mod ring_systems;
 mod rings;
 mod spelling;
 mod valence;
@@ -27,5 +31,6 @@ pub use graph::{
     TetrahedralStereo,
 };
 pub use molecule::Molecule;
+pub use ring_systems::RingSystems;
 pub use rings::{RingSet, RingSizes};
 pub use valence::implicit_hydrogens;
