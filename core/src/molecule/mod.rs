@@ -1,6 +1,7 @@
 //! The molecular graph and what is perceived on it: valence, Kekulé structure, rings, aromaticity.
 
 mod aromaticity;
+mod canonical;
 mod element;
 mod error;
 mod graph;
@@ -13,8 +14,10 @@ mod matching;
 mod molecule;
 mod normalise;
 mod rings;
+mod stereo;
 mod valence;
 
+pub use canonical::CanonicalOrder;
 pub use element::Element;
 pub use error::MoleculeError;
 pub use graph::{
