@@ -4,7 +4,10 @@ mod aromaticity;
 mod canonical;
 mod element;
 mod error;
+mod formula;
+mod fragments;
 mod graph;
+mod hydrogens;
 mod kekule;
 mod matching;
 #[expect(
@@ -14,12 +17,14 @@ mod matching;
 mod molecule;
 mod normalise;
 mod rings;
+mod spelling;
 mod stereo;
 mod valence;
 
 pub use canonical::CanonicalOrder;
 pub use element::Element;
 pub use error::MoleculeError;
+pub use formula::Formula;
 pub use graph::{
     Atom, Bond, BondOrder, DoubleBondStereo, Ligand, MAX_DEGREE, MoleculeBuilder, Neighbour,
     TetrahedralStereo,
