@@ -1,6 +1,7 @@
 //! The molecular graph and what is perceived on it: valence, Kekulé structure, rings, aromaticity.
 
 mod aromaticity;
+mod canonical;
 mod cycle_families;
 mod cycle_space;
 mod element;
@@ -21,8 +22,10 @@ mod pi_electrons;
 mod ring_systems;
 mod rings;
 mod spelling;
+mod stereo;
 mod valence;
 
+pub use canonical::CanonicalOrder;
 pub use element::Element;
 pub use error::MoleculeError;
 pub use formula::Formula;
