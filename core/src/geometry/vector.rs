@@ -49,6 +49,7 @@ impl Vector {
     }
 
     /// Vector product, right-handed.
+    #[must_use]
     pub fn cross(self, other: Self) -> Self {
         Self::new(
             self.y * other.z - self.z * other.y,
