@@ -1,10 +1,15 @@
 //! The molecular graph and what is perceived on it: valence, Kekulé structure, rings, aromaticity.
 
 mod aromaticity;
+mod canonical;
 mod element;
 mod error;
+mod formula;
+mod fragments;
 mod graph;
+mod hydrogens;
 mod kekule;
+mod matching;
 #[expect(
     clippy::module_inception,
     reason = "the file holds the type of that name"
@@ -12,13 +17,18 @@ mod kekule;
 mod molecule;
 mod normalise;
 mod rings;
+mod spelling;
+mod stereo;
 mod valence;
 
+pub use canonical::CanonicalOrder;
 pub use element::Element;
 pub use error::MoleculeError;
+pub use formula::Formula;
 pub use graph::{
     Atom, Bond, BondOrder, DoubleBondStereo, Ligand, MAX_DEGREE, MoleculeBuilder, Neighbour,
     TetrahedralStereo,
 };
 pub use molecule::Molecule;
 pub use rings::{RingSet, RingSizes};
+pub use valence::implicit_hydrogens;
