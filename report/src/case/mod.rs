@@ -27,6 +27,6 @@ pub use measurement::{
 pub use mistake::{CaseErrors, Mistake, MistakeKind};
 pub use read::{parse, read};
 pub use schema::schema_text;
-pub use substance::{Amount, Role, State, StructureSource, Substance};
+pub use substance::{Amount, Record, Role, State, StructureSource, Substance};
 pub use unit::{AmountBasis, AmountUnit, Basis, EnthalpyUnit, TemperatureUnit};
 pub use vocabulary::Vocabulary;

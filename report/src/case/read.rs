@@ -1,6 +1,7 @@
 //! From a file to a case, or to all its mistakes at once.
 
-use std::fs;
+use std::fs::File;
+use std::io::{ErrorKind, Read};
 use std::path::Path;
 
 use toml::de::DeTable;
@@ -10,8 +11,9 @@ use super::entries;
 use super::mistake::{CaseErrors, Mistake, MistakeKind};
 use super::section::{Findings, Section};
 use super::structures::Fault;
-use super::substance::{StructureSource, Substance};
+use super::substance::{Record, StructureSource, Substance};
 use super::syntax::Syntax;
+use crate::structure::Structure;
 
 /// Largest case file, in bytes: some ten thousand substances.
 const TEXT_LIMIT: usize = 4 * 1024 * 1024;
@@ -36,16 +38,20 @@ pub fn read(path: &Path) -> Result<Case, CaseErrors> {
         let mistake = Mistake::new(MistakeKind::Unreadable, message, mend);
         CaseErrors::new(&name, "", vec![mistake])
     };
-    let bytes = fs::read(path).map_err(|error| match error.kind() {
-        std::io::ErrorKind::NotFound => unreadable(
-            "there is no such case file",
-            "check the path; it counts from the folder in which the command is run",
-        ),
-        _ => unreadable(
-            &format!("the case file cannot be read: {error}"),
-            "name a TOML file that you have the right to read",
-        ),
-    })?;
+    // One byte more than is allowed is enough to know: what is named may be a device that never ends.
+    let mut bytes = Vec::new();
+    File::open(path)
+        .and_then(|file| file.take(TEXT_LIMIT as u64 + 1).read_to_end(&mut bytes))
+        .map_err(|error| match error.kind() {
+            ErrorKind::NotFound => unreadable(
+                "there is no such case file",
+                "check the path; it counts from the folder in which the command is run",
+            ),
+            _ => unreadable(
+                &format!("the case file cannot be read: {error}"),
+                "name a TOML file that you have the right to read",
+            ),
+        })?;
     let text = String::from_utf8(bytes).map_err(|error| {
         let place = error.utf8_error().valid_up_to();
         let line = 1 + error.as_bytes().iter().take(place).filter(|&&byte| byte == b'\n').count();
@@ -89,10 +95,7 @@ pub fn parse(text: &str, name: &str, folder: &Path) -> Result<Case, CaseErrors> 
     if text.len() > TEXT_LIMIT {
         let mistake = Mistake::new(
             MistakeKind::Unreadable,
-            format!(
-                "the case file has {} bytes, the limit is {TEXT_LIMIT}",
-                text.len()
-            ),
+            format!("the case file has more than {TEXT_LIMIT} bytes"),
             "split the case: one report is for one route",
         );
         return Err(CaseErrors::new(name, "", vec![mistake]));
@@ -120,11 +123,12 @@ fn content(text: &str, table: &DeTable<'_>, folder: &Path, findings: &Findings) 
         .map(|(entry, claim)| {
             let structure =
                 claim.and_then(|claim| claim.resolve(text, folder, findings, structure));
-            let (entry, (source, ())) = entry.zip(structure)?;
+            let (entry, (source, structure)) = entry.zip(structure)?;
             Some(Substance {
                 id: entry.id,
                 name: entry.name,
                 source,
+                structure,
                 state: entry.state,
                 role: entry.role,
                 amount: entry.amount,
@@ -146,6 +150,30 @@ fn content(text: &str, table: &DeTable<'_>, folder: &Path, findings: &Findings) 
     })
 }
 
-fn structure(_source: &StructureSource) -> Result<(), Fault> {
-    Ok(())
+fn structure(source: &StructureSource) -> Result<Structure, Fault> {
+    let (structure, mend) = match source {
+        StructureSource::Smiles(smiles) => (
+            Structure::from_smiles(smiles),
+            "correct the SMILES, or give the structure as a Molfile with `file` in place of `smiles`",
+        ),
+        StructureSource::File { record, text, .. } => {
+            let text = record.of(text).ok_or_else(|| Fault {
+                message: match record {
+                    Record::Number(number) => format!("the file has no structure number {number}"),
+                    Record::Name(name) => format!("the file has no structure called `{name}`"),
+                },
+                span: None,
+                mend: "structures are counted from 1; the name of one is its first line in the file",
+            })?;
+            (
+                Structure::from_molfile(text),
+                "correct the drawing, and export it again as a Molfile of one molecule",
+            )
+        }
+    };
+    structure.map_err(|error| Fault {
+        message: error.to_string(),
+        span: error.span(),
+        mend,
+    })
 }

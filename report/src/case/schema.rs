@@ -40,7 +40,8 @@ fn without_null(schema: &mut Schema) {
     }
     if let Some(Value::Array(mut schemas)) = schema.remove("anyOf") {
         schemas.retain(|schema| !is_null(schema));
-        schema.insert("allOf".to_owned(), Value::Array(schemas));
+        let keyword = if schemas.len() == 1 { "allOf" } else { "anyOf" };
+        schema.insert(keyword.to_owned(), Value::Array(schemas));
     }
 }
 
@@ -100,9 +101,8 @@ struct SubstanceTable {
     /// Structure as a Molfile or SDF; the path counts from the folder of the case file.
     #[schemars(length(min = 1), extend("examples" = ["structures/azetidine.mol"]))]
     file: Option<String>,
-    /// Which structure of an SDF is meant, counted from 1. The first if left out.
-    #[schemars(range(min = 1, max = 1_000_000))]
-    record: Option<u32>,
+    /// Which structure of an SDF is meant: its number, counted from 1, or its name. The first if left out.
+    record: Option<RecordEntry>,
     /// State of the substance in the process.
     state: State,
     /// What the substance does in the process.
@@ -113,6 +113,17 @@ struct SubstanceTable {
     notes: Option<String>,
     /// Measured values, each under a header `[[substance.measured]]`. They are shown first and compared with the estimate.
     measured: Option<Vec<MeasuredTable>>,
+}
+
+/// Number or name of a structure in an SDF.
+#[derive(JsonSchema)]
+#[schemars(untagged)]
+#[expect(dead_code, reason = "only its schema is used")]
+enum RecordEntry {
+    /// Number, counted from 1.
+    Number(#[schemars(range(min = 1, max = 1_000_000))] u32),
+    /// Name: the first line of the structure.
+    Name(#[schemars(length(min = 1))] String),
 }
 
 /// An amount with its unit.
@@ -129,7 +140,15 @@ struct AmountTable {
 
 /// A measured value with its source.
 #[derive(JsonSchema)]
-#[schemars(deny_unknown_fields, extend("dependencies" = { "uncertainty": ["coverage_k"], "coverage_k": ["uncertainty"] }))]
+#[schemars(
+    deny_unknown_fields,
+    extend("dependencies" = { "uncertainty": ["coverage_k"], "coverage_k": ["uncertainty"] }),
+    extend(
+        "if" = { "properties": { "quantity": { "const": "decomposition" } } },
+        "then" = { "required": ["method", "crucible"], "properties": { "phase": false, "value": { "exclusiveMinimum": 0 } } },
+        "else" = { "required": ["phase"], "properties": { "method": false, "crucible": false, "onset": false } }
+    )
+)]
 #[expect(dead_code, reason = "only its schema is used")]
 struct MeasuredTable {
     /// What was measured.

@@ -5,10 +5,11 @@ use std::fs;
 use std::path::{Path, PathBuf};
 
 use toml::Spanned;
+use toml::de::DeValue;
 
 use super::mistake::{Mistake, MistakeKind};
 use super::section::{Findings, Section};
-use super::substance::StructureSource;
+use super::substance::{Record, StructureSource};
 
 /// Largest structure file that is read, in bytes; a record of one molecule has a few thousand.
 const FILE_LIMIT: u64 = 16 * 1024 * 1024;
@@ -23,7 +24,7 @@ enum Given<'s> {
     Smiles(Spanned<&'s str>),
     File {
         path: Spanned<&'s str>,
-        record: usize,
+        record: Record,
     },
 }
 
@@ -33,6 +34,8 @@ pub(super) struct Fault {
     pub(super) message: String,
     /// The offending bytes of a SMILES.
     pub(super) span: Option<Range<usize>>,
+    /// How to mend it.
+    pub(super) mend: &'static str,
 }
 
 impl<'s> Claim<'s> {
@@ -116,7 +119,7 @@ impl<'s> Claim<'s> {
                     .ok()?;
                 let source = StructureSource::File {
                     path: PathBuf::from(path.get_ref()),
-                    record: *record,
+                    record: record.clone(),
                     text: file,
                 };
                 (source, path.span())
@@ -133,7 +136,8 @@ impl<'s> Claim<'s> {
                 };
                 let message = format!("the structure of {} cannot be used", self.owner);
                 findings.note(
-                    Mistake::new(MistakeKind::Structure, message, "").at(place, fault.message),
+                    Mistake::new(MistakeKind::Structure, message, fault.mend)
+                        .at(place, fault.message),
                 );
                 None
             }
@@ -141,21 +145,25 @@ impl<'s> Claim<'s> {
     }
 }
 
-fn record(section: &mut Section<'_>) -> Option<usize> {
-    if section.key_span("record").is_none() {
-        section.value("record");
-        return Some(1);
+fn record(section: &mut Section<'_>) -> Option<Record> {
+    let value = section.value("record");
+    let Some(value) = value else {
+        return Some(Record::Number(1));
+    };
+    if matches!(value.get_ref(), DeValue::String(_)) {
+        let name = section.line("record")?;
+        return Some(Record::Name((*name.get_ref()).to_owned()));
     }
     let number = section.number("record")?;
     // Beyond a million records it is no longer a file of structures for one case.
     if number.value.fract() == 0.0 && (1.0..=1e6).contains(&number.value) {
-        return Some(number.value as usize);
+        return Some(Record::Number(number.value as usize));
     }
     section.note(
         Mistake::new(
             MistakeKind::Value,
             "`record` is not the number of a record",
-            "count the structures of the SDF from 1: `record = 1`",
+            "count the structures of the SDF from 1, `record = 1`, or give the name of one, `record = \"azetidine\"`",
         )
         .at(number.span, "expected a whole number from 1"),
     );

@@ -1,9 +1,9 @@
 //! Units a case file may use, and their conversion into internal ones (kJ/mol, J/g, g, mol, K).
 
+use tautring_core::quantities::KJ_PER_KCAL;
+
 use super::vocabulary::vocabulary;
 
-/// Joules in one thermochemical calorie, exact by definition.
-const JOULES_PER_CALORIE: f64 = 4.184;
 /// Zero of the Celsius scale in kelvin, exact by definition.
 const CELSIUS_ZERO: f64 = 273.15;
 
@@ -80,7 +80,7 @@ impl EnthalpyUnit {
     pub fn convert(self, value: f64) -> f64 {
         match self {
             Self::KilojoulePerMole | Self::JoulePerGram => value,
-            Self::KilocaloriePerMole | Self::CaloriePerGram => value * JOULES_PER_CALORIE,
+            Self::KilocaloriePerMole | Self::CaloriePerGram => value * KJ_PER_KCAL,
             Self::JoulePerMole => value / 1000.0,
         }
     }
