@@ -2,6 +2,9 @@
 
 mod aromaticity;
 mod canonical;
+mod centres;
+mod cycle_families;
+mod cycle_space;
 mod element;
 mod error;
 mod formula;
@@ -16,12 +19,14 @@ mod matching;
 )]
 mod molecule;
 mod normalise;
+mod ring_systems;
 mod rings;
 mod spelling;
 mod stereo;
 mod valence;
 
 pub use canonical::CanonicalOrder;
+pub use centres::CentreKind;
 pub use element::Element;
 pub use error::MoleculeError;
 pub use formula::Formula;
@@ -30,5 +35,6 @@ pub use graph::{
     TetrahedralStereo,
 };
 pub use molecule::Molecule;
+pub use ring_systems::RingSystems;
 pub use rings::{RingSet, RingSizes};
 pub use valence::implicit_hydrogens;
