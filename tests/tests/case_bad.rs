@@ -89,3 +89,13 @@ fn unreadable_files_are_answered_too() {
         "{latin}"
     );
 }
+
+/// A device that never ends must not fill the memory.
+#[cfg(unix)]
+#[test]
+fn endless_files_are_refused() {
+    let endless = case::read(Path::new("/dev/zero"))
+        .expect_err("it is no case")
+        .render(false);
+    assert!(endless.contains("more than"), "{endless}");
+}

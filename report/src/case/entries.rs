@@ -13,7 +13,7 @@ use super::mistake::{Mistake, MistakeKind};
 use super::section::{Section, shortened};
 use super::structures::Claim;
 use super::substance::{Amount, Role, State};
-use super::unit::AmountUnit;
+use super::unit::{AmountUnit, Portion};
 
 /// Largest amount that can be meant, in g or mol: a thousand tonnes is a ship's load.
 const AMOUNT_LIMIT: f64 = 1e9;
@@ -167,11 +167,11 @@ fn date(section: &mut Section<'_>, key: &'static str) -> Option<Date> {
 
 fn amount(section: &mut Section<'_>) -> Option<Amount> {
     let (number, unit) = section.quantity::<AmountUnit>("amount", "value = 2.5, unit = \"kg\"")?;
-    let value = unit.convert(number.value);
+    let portion = unit.of(number.value);
+    let (Portion::Grams(value) | Portion::Moles(value)) = portion;
     if value > 0.0 && value <= AMOUNT_LIMIT {
         return Some(Amount {
-            basis: unit.basis(),
-            value,
+            portion,
             written: format!("{} {unit}", number.written),
         });
     }

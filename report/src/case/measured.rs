@@ -5,7 +5,7 @@ use super::measurement::{
 };
 use super::mistake::{Mistake, MistakeKind};
 use super::section::{Number, Section};
-use super::unit::{Basis, EnthalpyUnit, TemperatureUnit};
+use super::unit::{Enthalpy, EnthalpyUnit, TemperatureUnit};
 use super::vocabulary::{Vocabulary, list};
 
 /// Largest enthalpy per mole that can be meant, kJ/mol: no molecule of the supported size comes near it, and a number
@@ -44,15 +44,14 @@ pub(super) fn measurement(section: &mut Section<'_>) -> Option<Measurement> {
     let (standard_uncertainty, uncertainty, coverage_k) = match uncertainty {
         None => (None, None, None),
         Some((expanded, coverage)) => (
-            Some(unit.convert(expanded.value) / coverage.value),
+            Some(unit.of(expanded.value / coverage.value)),
             Some(expanded.written.to_owned()),
             Some(coverage.written.to_owned()),
         ),
     };
     Some(Measurement {
         subject: subject?,
-        basis: unit.basis(),
-        value: unit.convert(value.value),
+        value: unit.of(value.value),
         standard_uncertainty,
         written: Written {
             value: value.written.to_owned(),
@@ -151,7 +150,7 @@ fn subject(section: &mut Section<'_>, quantity: Option<Quantity>) -> Option<Subj
 fn onset(section: &mut Section<'_>) -> Option<Onset> {
     let (number, unit) =
         section.quantity::<TemperatureUnit>("onset", "value = 110, unit = \"°C\"")?;
-    let kelvin = unit.convert(number.value);
+    let kelvin = unit.kelvin(number.value);
     if kelvin > 0.0 && kelvin <= ONSET_LIMIT {
         return Some(Onset {
             kelvin,
@@ -211,11 +210,10 @@ fn settlement(section: &mut Section<'_>) -> Option<Settlement> {
 }
 
 fn plausible(section: &Section<'_>, number: &Number<'_>, unit: EnthalpyUnit) {
-    let (limit, unit_of_limit) = match unit.basis() {
-        Basis::Molar => (MOLAR_LIMIT, "kJ/mol"),
-        Basis::Specific => (SPECIFIC_LIMIT, "J/g"),
+    let (value, limit, unit_of_limit) = match unit.of(number.value) {
+        Enthalpy::Molar(energy) => (energy.kj_per_mol(), MOLAR_LIMIT, "kJ/mol"),
+        Enthalpy::Specific(energy) => (energy.j_per_g(), SPECIFIC_LIMIT, "J/g"),
     };
-    let value = unit.convert(number.value);
     if value.abs() <= limit {
         return;
     }

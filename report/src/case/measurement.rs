@@ -1,6 +1,6 @@
 //! A measured value: quantity, number with unit, uncertainty with its coverage, source.
 
-use super::unit::Basis;
+use super::unit::Enthalpy;
 use super::vocabulary::vocabulary;
 
 vocabulary! {
@@ -47,18 +47,16 @@ vocabulary! {
     }
 }
 
-/// A measured value, in internal units, with what the case file said.
+/// A measured value with what the case file said.
 #[derive(Clone, Debug, PartialEq)]
 #[non_exhaustive]
 pub struct Measurement {
     /// What was measured.
     pub subject: Subject,
-    /// Whether `value` and `standard_uncertainty` are in kJ/mol or J/g.
-    pub basis: Basis,
-    /// The value, in kJ/mol or J/g.
-    pub value: f64,
-    /// The standard uncertainty, in kJ/mol or J/g, if the source states an uncertainty.
-    pub standard_uncertainty: Option<f64>,
+    /// The value.
+    pub value: Enthalpy,
+    /// The standard uncertainty, if the source states an uncertainty; per mole or per gram as the value is.
+    pub standard_uncertainty: Option<Enthalpy>,
     /// Number, uncertainty, coverage factor and unit as the case file has them.
     pub written: Written,
     /// Where the value was published or who measured it.
@@ -123,34 +121,4 @@ pub struct Settlement {
     pub by: String,
     /// Why.
     pub reason: String,
-}
-
-impl Measurement {
-    /// The value in kJ/mol.
-    ///
-    /// # Units
-    ///
-    /// `molar_mass` in g/mol.
-    pub fn kj_per_mol(&self, molar_mass: f64) -> f64 {
-        self.basis.kj_per_mol(self.value, molar_mass)
-    }
-
-    /// The standard uncertainty in kJ/mol, if the source states an uncertainty.
-    ///
-    /// # Units
-    ///
-    /// `molar_mass` in g/mol.
-    pub fn u_kj_per_mol(&self, molar_mass: f64) -> Option<f64> {
-        self.standard_uncertainty
-            .map(|u| self.basis.kj_per_mol(u, molar_mass))
-    }
-}
-
-impl Basis {
-    fn kj_per_mol(self, value: f64, molar_mass: f64) -> f64 {
-        match self {
-            Self::Molar => value,
-            Self::Specific => value * molar_mass / 1000.0,
-        }
-    }
 }

@@ -1,7 +1,6 @@
 //! Case files: the schema, reading with errors that point at the line, the JSON Schema for editors.
 //!
-//! [`read`] turns a TOML file into a [`Case`], checked and in internal units (kJ/mol, J/g, g, mol, K, standard
-//! uncertainties), or into [`CaseErrors`] with every mistake in it. Reading goes on after a mistake: syntax, keys, values
+//! [`read`] turns a TOML file into a [`Case`], checked and in internal units, with standard uncertainties, or into [`CaseErrors`] with every mistake in it. Reading goes on after a mistake: syntax, keys, values
 //! and structures are judged in one go.
 
 mod date;
@@ -28,5 +27,5 @@ pub use mistake::{CaseErrors, Mistake, MistakeKind};
 pub use read::{parse, read};
 pub use schema::schema_text;
 pub use substance::{Amount, Record, Role, State, StructureSource, Substance};
-pub use unit::{AmountBasis, AmountUnit, Basis, EnthalpyUnit, TemperatureUnit};
+pub use unit::{AmountUnit, Enthalpy, EnthalpyUnit, Portion, TemperatureUnit};
 pub use vocabulary::Vocabulary;

@@ -3,7 +3,7 @@
 use std::path::PathBuf;
 
 use super::measurement::Measurement;
-use super::unit::AmountBasis;
+use super::unit::Portion;
 use super::vocabulary::vocabulary;
 use crate::structure::Structure;
 
@@ -123,42 +123,14 @@ fn records(text: &str) -> impl Iterator<Item = &str> {
     })
 }
 
-/// An amount, in g or mol.
+/// An amount in the process.
 #[derive(Clone, Debug, PartialEq)]
 #[non_exhaustive]
 pub struct Amount {
-    /// Whether `value` is in g or in mol.
-    pub basis: AmountBasis,
-    /// The number, in g or mol.
-    pub value: f64,
+    /// The amount, greater than zero.
+    pub portion: Portion,
     /// Number and unit as the case file has them.
     pub written: String,
-}
-
-impl Amount {
-    /// The amount of substance in mol.
-    ///
-    /// # Units
-    ///
-    /// `molar_mass` in g/mol.
-    pub fn moles(&self, molar_mass: f64) -> f64 {
-        match self.basis {
-            AmountBasis::Mass => self.value / molar_mass,
-            AmountBasis::Substance => self.value,
-        }
-    }
-
-    /// The mass in g.
-    ///
-    /// # Units
-    ///
-    /// `molar_mass` in g/mol.
-    pub fn grams(&self, molar_mass: f64) -> f64 {
-        match self.basis {
-            AmountBasis::Mass => self.value,
-            AmountBasis::Substance => self.value * molar_mass,
-        }
-    }
 }
 
 #[cfg(test)]

@@ -1,6 +1,6 @@
 //! Units a case file may use, and their conversion into internal ones (kJ/mol, J/g, g, mol, K).
 
-use tautring_core::quantities::KJ_PER_KCAL;
+use tautring_core::quantities::{KJ_PER_KCAL, MolarEnergy, MolarMass, SpecificEnergy};
 
 use super::vocabulary::vocabulary;
 
@@ -49,68 +49,97 @@ vocabulary! {
     }
 }
 
-/// What an enthalpy is counted on, with the internal unit of its number.
-#[derive(Clone, Copy, Debug, PartialEq, Eq, Hash)]
-pub enum Basis {
-    /// Per mole, in kJ/mol.
-    Molar,
-    /// Per gram, in J/g.
-    Specific,
+/// An enthalpy as it was stated: per mole, or per gram.
+#[derive(Clone, Copy, Debug, PartialEq)]
+pub enum Enthalpy {
+    /// Per mole.
+    Molar(MolarEnergy),
+    /// Per gram.
+    Specific(SpecificEnergy),
 }
 
-/// What an amount counts, with the internal unit of its number.
-#[derive(Clone, Copy, Debug, PartialEq, Eq, Hash)]
-pub enum AmountBasis {
-    /// Mass, in g.
-    Mass,
-    /// Amount of substance, in mol.
-    Substance,
+/// An amount as it was stated: a mass, or an amount of substance.
+#[derive(Clone, Copy, Debug, PartialEq)]
+pub enum Portion {
+    /// Mass in g.
+    Grams(f64),
+    /// Amount of substance in mol.
+    Moles(f64),
 }
 
-impl EnthalpyUnit {
-    /// What the unit is counted on.
-    pub fn basis(self) -> Basis {
+impl Enthalpy {
+    /// The enthalpy of one mole.
+    ///
+    /// ```
+    /// use tautring_core::quantities::MolarMass;
+    /// use tautring_report::case::EnthalpyUnit;
+    ///
+    /// let oxirane = MolarMass::from_g_per_mol(44.053)?;
+    /// let released = EnthalpyUnit::JoulePerGram.of(1000.0).per_mole(oxirane);
+    /// assert!((released.kj_per_mol() - 44.053).abs() < 1e-9);
+    /// # Ok::<(), tautring_core::quantities::QuantityError>(())
+    /// ```
+    pub fn per_mole(self, mass: MolarMass) -> MolarEnergy {
         match self {
-            Self::KilojoulePerMole | Self::KilocaloriePerMole | Self::JoulePerMole => Basis::Molar,
-            Self::JoulePerGram | Self::CaloriePerGram => Basis::Specific,
+            Self::Molar(energy) => energy,
+            Self::Specific(energy) => energy.per_mole(mass),
+        }
+    }
+}
+
+impl Portion {
+    /// The amount of substance in mol.
+    pub fn moles(self, mass: MolarMass) -> f64 {
+        match self {
+            Self::Grams(grams) => grams / mass.g_per_mol(),
+            Self::Moles(moles) => moles,
         }
     }
 
-    /// A number in this unit, in kJ/mol or J/g as [`EnthalpyUnit::basis`] says.
-    pub fn convert(self, value: f64) -> f64 {
+    /// The mass in g.
+    pub fn grams(self, mass: MolarMass) -> f64 {
         match self {
-            Self::KilojoulePerMole | Self::JoulePerGram => value,
-            Self::KilocaloriePerMole | Self::CaloriePerGram => value * KJ_PER_KCAL,
-            Self::JoulePerMole => value / 1000.0,
+            Self::Grams(grams) => grams,
+            Self::Moles(moles) => moles * mass.g_per_mol(),
+        }
+    }
+}
+
+impl EnthalpyUnit {
+    /// So much of this unit.
+    pub fn of(self, number: f64) -> Enthalpy {
+        match self {
+            Self::KilojoulePerMole => Enthalpy::Molar(MolarEnergy::from_kj_per_mol(number)),
+            Self::KilocaloriePerMole => Enthalpy::Molar(MolarEnergy::from_kcal_per_mol(number)),
+            Self::JoulePerMole => Enthalpy::Molar(MolarEnergy::from_kj_per_mol(number / 1000.0)),
+            Self::JoulePerGram => Enthalpy::Specific(SpecificEnergy::from_j_per_g(number)),
+            // The calorie has as many joules as the kilocalorie has kilojoules.
+            Self::CaloriePerGram => {
+                Enthalpy::Specific(SpecificEnergy::from_j_per_g(number * KJ_PER_KCAL))
+            }
         }
     }
 }
 
 impl AmountUnit {
-    /// What the unit counts.
-    pub fn basis(self) -> AmountBasis {
+    /// So much of this unit.
+    pub fn of(self, number: f64) -> Portion {
         match self {
-            Self::Gram | Self::Kilogram | Self::Milligram => AmountBasis::Mass,
-            Self::Mole | Self::Millimole => AmountBasis::Substance,
-        }
-    }
-
-    /// A number in this unit, in g or mol as [`AmountUnit::basis`] says.
-    pub fn convert(self, value: f64) -> f64 {
-        match self {
-            Self::Gram | Self::Mole => value,
-            Self::Kilogram => value * 1000.0,
-            Self::Milligram | Self::Millimole => value / 1000.0,
+            Self::Gram => Portion::Grams(number),
+            Self::Kilogram => Portion::Grams(number * 1000.0),
+            Self::Milligram => Portion::Grams(number / 1000.0),
+            Self::Mole => Portion::Moles(number),
+            Self::Millimole => Portion::Moles(number / 1000.0),
         }
     }
 }
 
 impl TemperatureUnit {
-    /// A number in this unit, in K.
-    pub fn convert(self, value: f64) -> f64 {
+    /// So much of this unit, in K.
+    pub fn kelvin(self, number: f64) -> f64 {
         match self {
-            Self::Kelvin => value,
-            Self::Celsius => value + CELSIUS_ZERO,
+            Self::Kelvin => number,
+            Self::Celsius => number + CELSIUS_ZERO,
         }
     }
 }
@@ -120,25 +149,36 @@ mod tests {
     use super::*;
     use approx::assert_relative_eq;
 
-    #[test]
-    fn converts_into_internal_units() {
-        // 51.9 kcal/mol is 217.15 kJ/mol in two tables that state bicyclobutane both ways.
-        assert_relative_eq!(
-            EnthalpyUnit::KilocaloriePerMole.convert(51.9),
-            217.15,
-            epsilon = 5e-3
-        );
-        assert_relative_eq!(EnthalpyUnit::JoulePerMole.convert(-52_680.0), -52.68);
-        assert_relative_eq!(EnthalpyUnit::CaloriePerGram.convert(1.0), 4.184);
-        assert_relative_eq!(AmountUnit::Kilogram.convert(2.5), 2500.0);
-        assert_relative_eq!(AmountUnit::Millimole.convert(20.0), 0.02);
-        assert_relative_eq!(TemperatureUnit::Celsius.convert(25.0), 298.15);
+    fn kj_per_mol(unit: EnthalpyUnit, number: f64) -> f64 {
+        let mass = MolarMass::from_g_per_mol(50.0).expect("a molar mass");
+        unit.of(number).per_mole(mass).kj_per_mol()
     }
 
     #[test]
-    fn knows_molar_from_specific() {
-        assert_eq!(EnthalpyUnit::CaloriePerGram.basis(), Basis::Specific);
-        assert_eq!(EnthalpyUnit::JoulePerMole.basis(), Basis::Molar);
-        assert_eq!(AmountUnit::Millimole.basis(), AmountBasis::Substance);
+    fn converts_into_internal_units() {
+        // 51.9 kcal/mol is 217.15 kJ/mol in two tables that state bicyclobutane both ways.
+        let bicyclobutane = kj_per_mol(EnthalpyUnit::KilocaloriePerMole, 51.9);
+        assert_relative_eq!(bicyclobutane, 217.15, epsilon = 5e-3);
+        assert_relative_eq!(kj_per_mol(EnthalpyUnit::KilojoulePerMole, -52.68), -52.68);
+        assert_relative_eq!(kj_per_mol(EnthalpyUnit::JoulePerMole, -52_680.0), -52.68);
+        assert_relative_eq!(kj_per_mol(EnthalpyUnit::JoulePerGram, 1000.0), 50.0);
+        assert_relative_eq!(kj_per_mol(EnthalpyUnit::CaloriePerGram, 1000.0), 209.2);
+        assert_relative_eq!(TemperatureUnit::Celsius.kelvin(25.0), 298.15);
+        assert_relative_eq!(TemperatureUnit::Kelvin.kelvin(300.0), 300.0);
+    }
+
+    #[test]
+    fn turns_mass_into_moles_and_back() {
+        let mass = MolarMass::from_g_per_mol(50.0).expect("a molar mass");
+        for (unit, moles, grams) in [
+            (AmountUnit::Gram, 0.02, 1.0),
+            (AmountUnit::Kilogram, 20.0, 1000.0),
+            (AmountUnit::Milligram, 2e-5, 1e-3),
+            (AmountUnit::Mole, 1.0, 50.0),
+            (AmountUnit::Millimole, 1e-3, 0.05),
+        ] {
+            assert_relative_eq!(unit.of(1.0).moles(mass), moles);
+            assert_relative_eq!(unit.of(1.0).grams(mass), grams);
+        }
     }
 }
