@@ -278,8 +278,7 @@ impl<'a, const A: usize, const B: usize> Search<'a, A, B> {
             let cell = colours.get(usize::from(last)).copied();
             let orbits = self.orbits();
             let next = (usize::from(last) + 1..colours.len()).find(|&atom| {
-                colours.get(atom).copied() == cell
-                    && orbits.get(atom).copied() == Some(atom as u16)
+                colours.get(atom).copied() == cell && orbits.get(atom).copied() == Some(atom as u16)
             });
             if let Some(atom) = next {
                 let _ = self.path.push(atom as u16);

@@ -2,6 +2,7 @@
 
 mod aromaticity;
 mod canonical;
+mod centres;
 mod cycle_families;
 mod cycle_space;
 mod element;
@@ -26,6 +27,7 @@ mod stereo;
 mod valence;
 
 pub use canonical::CanonicalOrder;
+pub use centres::CentreKind;
 pub use element::Element;
 pub use error::MoleculeError;
 pub use formula::Formula;

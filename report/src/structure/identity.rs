@@ -73,7 +73,8 @@ pub fn skeleton(molecule: &HostMolecule) -> Result<String, MoleculeError> {
         let [a, b] = bond.atoms.map(usize::from);
         builder.add_bond(a, b, bond.order)?;
     }
-    Ok(identity(&builder.suppress_hydrogens().finish()?))
+    builder.suppress_hydrogens();
+    Ok(identity(&builder.finish()?))
 }
 
 /// `z` or `e` for references of the lowest rank on the same side or on opposite sides.
@@ -94,11 +95,7 @@ fn double_bond(molecule: &HostMolecule, bond: usize, rank: &impl Fn(u16) -> u16)
 }
 
 /// `@` or `@@` for ligands in the order of their ranks, as seen from the first, anticlockwise or clockwise.
-fn tetrahedral(
-    molecule: &HostMolecule,
-    centre: u16,
-    rank: &impl Fn(u16) -> u16,
-) -> &'static str {
+fn tetrahedral(molecule: &HostMolecule, centre: u16, rank: &impl Fn(u16) -> u16) -> &'static str {
     let Some(mark) = molecule.tetrahedral().iter().find(|m| m.centre == centre) else {
         return "";
     };
