@@ -4,6 +4,7 @@
 //! smooth levels), δ a heavy-tailed deviation of the molecule and ε the heavy-tailed error of a measurement.
 
 pub mod cholesky;
+mod deviation;
 mod error;
 mod features;
 mod key;
@@ -13,6 +14,7 @@ mod model;
 mod prior;
 mod skeleton;
 
+pub use deviation::{CONTRIBUTIONS, Deviation, RINGS};
 pub use error::AdditivityError;
 pub use features::{Features, Term};
 pub use key::Key;

@@ -179,7 +179,8 @@ impl Model<'_> {
             value_kj_per_mol: value,
             // Rounding may push a variance of nothing below zero.
             model_variance: (prior - explained).max(0.0),
-            deviation_variance: features.molecules() * self.prior.deviation_variance(),
+            deviation_variance: self.prior.squared_scale(features.deviation())
+                * self.prior.widening(),
         }
     }
 

@@ -54,6 +54,13 @@ impl AtomType {
         u64::from(self.0)
     }
 
+    /// The class as a token of a key: element, charge, aromatic or not, and whether there are double and triple bonds.
+    pub(super) fn class_token(self) -> u64 {
+        let double = u16::from(self.0 >> 7 & 0xf != 0) << 7;
+        let second = u16::from(self.0 >> 11 & 0xf != 0) << 8;
+        u64::from(self.0 & 0x807f | double | second)
+    }
+
     /// The element alone, as a token of a key.
     pub(super) fn element_token(self) -> u64 {
         u64::from(self.0 & 0xf)

@@ -26,8 +26,7 @@ pub struct LeftOut {
 /// With S the left-out rows, measured minus predicted is (K⁻¹_SS)⁻¹ α_S and its covariance (K⁻¹_SS)⁻¹. The weights of the heavy
 /// tails and the prior are those of all measurements.
 pub fn leave_out(data: &Dataset, posterior: &Posterior) -> Vec<LeftOut> {
-    let nu = posterior.prior.degrees_of_freedom;
-    let widening = nu / (nu - 2.0);
+    let prior = &posterior.prior;
     let mut result: Vec<LeftOut> = data
         .constitutions
         .iter()
@@ -58,8 +57,10 @@ pub fn leave_out(data: &Dataset, posterior: &Posterior) -> Vec<LeftOut> {
                     let model = total
                         - posterior.error_variance[row]
                         - posterior.deviation_variance[molecule];
-                    let truth = model.max(0.0) + posterior.prior.deviation_variance();
-                    let error = data.rows[row].u_kj_per_mol.powi(2) * widening;
+                    let truth = model.max(0.0)
+                        + prior.widening()
+                            * prior.squared_scale(data.rows[row].features.deviation());
+                    let error = data.rows[row].u_kj_per_mol.powi(2) * prior.widening();
                     LeftOut {
                         row,
                         error_kj_per_mol: errors[at],
@@ -87,6 +88,8 @@ pub struct Summary {
     pub root_mean_square_kj_per_mol: f64,
     /// Share of the measurements inside their 95 % interval.
     pub coverage: f64,
+    /// Mean logarithm of the predictive density (Student's with four degrees of freedom), the larger the better.
+    pub score: f64,
 }
 
 /// Factor from the standard uncertainty to the 95 % interval.
@@ -96,7 +99,11 @@ pub const COVERAGE_FACTOR: f64 = 1.96;
 pub fn summarise<'a>(errors: impl IntoIterator<Item = &'a LeftOut>) -> Option<Summary> {
     let mut sizes = Vec::new();
     let mut inside = 0_usize;
+    let mut score = 0.0;
     for e in errors {
+        let scale = e.u_new_measurement_kj_per_mol / 2f64.sqrt();
+        let z = e.error_kj_per_mol / scale;
+        score += 0.375_f64.ln() - 2.5 * (1.0 + z * z / 4.0).ln() - scale.ln();
         let size = e.error_kj_per_mol.abs();
         inside += usize::from(size <= COVERAGE_FACTOR * e.u_new_measurement_kj_per_mol);
         sizes.push(size);
@@ -113,6 +120,7 @@ pub fn summarise<'a>(errors: impl IntoIterator<Item = &'a LeftOut>) -> Option<Su
         mean_kj_per_mol: sizes.iter().sum::<f64>() / n,
         root_mean_square_kj_per_mol: (sizes.iter().map(|s| s * s).sum::<f64>() / n).sqrt(),
         coverage: inside as f64 / n,
+        score: score / n,
     })
 }
 
