@@ -109,11 +109,11 @@ impl Posterior {
                 }
             }
         }
-        let scale = prior.deviation_kj_per_mol;
         let deviation_variance: Vec<f64> = weights
             .molecules
             .iter()
-            .map(|w| scale * scale / w)
+            .zip(&data.molecules)
+            .map(|(w, rows)| squared_scale(data, rows, &prior) / w)
             .collect();
         let error_variance: Vec<f64> = data
             .rows
