@@ -101,7 +101,7 @@ fn relevant_rings_are_those_of_the_brute_force_count() {
     }
 }
 
-/// By definition the two sets differ: RDKit completes a smallest set by those rings of equal size that its search meets.
+/// By definition the two sets differ: `RDKit` completes a smallest set by those rings of equal size that its search meets.
 /// On these molecules they are of one size.
 #[test]
 fn relevant_rings_are_as_many_as_the_symmetrised_smallest_rings_of_rdkit() {
