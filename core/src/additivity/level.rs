@@ -11,6 +11,8 @@ pub enum Level {
     Element,
     /// Atoms by type and number of hydrogens.
     Atom,
+    /// Bonds by their two elements and their order.
+    BondOrder,
     /// Bonds by the classes of their two atoms (element, saturated or not) and their order.
     BondElements,
     /// Bonds by the types of their two atoms and their order.
@@ -39,7 +41,7 @@ pub enum Level {
     Cis,
     /// Substituents in ortho, meta and para position of an aromatic ring.
     AromaticPair,
-    /// Aromatic atoms by the aromatic rings that they are in.
+    /// Aromatic rings by size, and atoms that fuse them.
     AromaticRing,
     /// Rings by size, smooth in size.
     RingSize,
@@ -61,9 +63,10 @@ pub enum Level {
 
 impl Level {
     /// Every level, in the order of the keys.
-    pub const ALL: [Self; 25] = [
+    pub const ALL: [Self; 26] = [
         Self::Element,
         Self::Atom,
+        Self::BondOrder,
         Self::BondElements,
         Self::Bond,
         Self::GroupElements,
@@ -94,6 +97,7 @@ impl Level {
         match self {
             Self::Element => "element",
             Self::Atom => "atom",
+            Self::BondOrder => "bond order",
             Self::BondElements => "bond elements",
             Self::Bond => "bond",
             Self::GroupElements => "group elements",

@@ -6,6 +6,7 @@
 pub mod cholesky;
 mod deviation;
 mod error;
+mod estimate;
 mod features;
 mod key;
 mod level;
@@ -16,9 +17,10 @@ mod skeleton;
 
 pub use deviation::{CONTRIBUTIONS, Deviation, RINGS};
 pub use error::AdditivityError;
+pub use estimate::Estimate;
 pub use features::{Features, Term};
 pub use key::Key;
 pub use level::Level;
 pub use levels::{count, count_strain};
-pub use model::{Estimate, MAX_LEFT_OUT, Model};
+pub use model::{MAX_LEFT_OUT, Model};
 pub use prior::Prior;

@@ -67,11 +67,6 @@ impl Prior {
             .fold(0.0, |sum, (count, scale)| sum + count * scale * scale)
     }
 
-    /// Variance over squared scale of the heavy-tailed distributions: ν / (ν − 2).
-    pub fn widening(&self) -> f64 {
-        self.degrees_of_freedom / (self.degrees_of_freedom - 2.0)
-    }
-
     /// Prior correlation of the strain of rings of two sizes.
     pub(super) fn size_correlation(&self, n: usize, m: usize) -> f64 {
         if n == m {

@@ -29,6 +29,8 @@ pub(super) fn count<const A: usize, const B: usize, const F: usize>(
         let order = skeleton.order_token(bond);
         let [low, high] = sorted(a.kind.token(), b.kind.token());
         features.add(Key::new(Level::Bond, &[low, high, order]), 1.0)?;
+        let [low, high] = sorted(a.kind.element_token(), b.kind.element_token());
+        features.add(Key::new(Level::BondOrder, &[low, high, order]), 1.0)?;
         let [low, high] = sorted(a.kind.class_token(), b.kind.class_token());
         features.add(Key::new(Level::BondElements, &[low, high, order]), 1.0)?;
     }
