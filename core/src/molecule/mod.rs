@@ -25,7 +25,7 @@ mod spelling;
 mod stereo;
 mod valence;
 
-pub use canonical::CanonicalOrder;
+pub use canonical::{CanonicalOrder, CodeRow};
 pub use centres::CentreKind;
 pub use element::Element;
 pub use error::MoleculeError;
