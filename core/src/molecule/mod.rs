@@ -19,6 +19,7 @@ mod matching;
 )]
 mod molecule;
 mod normalise;
+mod pi_electrons;
 mod ring_systems;
 mod rings;
 mod spelling;
