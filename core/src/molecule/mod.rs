@@ -2,6 +2,7 @@
 
 mod aromaticity;
 mod canonical;
+mod canonical_search;
 mod centres;
 mod cycle_families;
 mod cycle_space;
@@ -26,7 +27,7 @@ mod spelling;
 mod stereo;
 mod valence;
 
-pub use canonical::CanonicalOrder;
+pub use canonical::{CanonicalOrder, CodeRow};
 pub use centres::CentreKind;
 pub use element::Element;
 pub use error::MoleculeError;
