@@ -1,9 +1,13 @@
 //! The molecular graph and what is perceived on it: valence, Kekulé structure, rings, aromaticity.
 
 mod aromaticity;
+mod canonical;
 mod element;
 mod error;
+mod formula;
+mod fragments;
 mod graph;
+mod hydrogens;
 mod kekule;
 mod matching;
 #[expect(
@@ -13,10 +17,14 @@ mod matching;
 mod molecule;
 mod normalise;
 mod rings;
+mod spelling;
+mod stereo;
 mod valence;
 
+pub use canonical::CanonicalOrder;
 pub use element::Element;
 pub use error::MoleculeError;
+pub use formula::Formula;
 pub use graph::{
     Atom, Bond, BondOrder, DoubleBondStereo, Ligand, MAX_DEGREE, MoleculeBuilder, Neighbour,
     TetrahedralStereo,

@@ -3,7 +3,9 @@
 use heapless::Vec;
 
 use super::error::MoleculeError;
-use super::graph::{Atom, Bond, MAX_DEGREE, MoleculeBuilder, Neighbour, TetrahedralStereo};
+use super::graph::{
+    Atom, Bond, DoubleBondStereo, MAX_DEGREE, MoleculeBuilder, Neighbour, TetrahedralStereo,
+};
 use super::rings::{RingSet, RingSizes};
 use super::{Element, aromaticity, kekule, normalise, valence};
 
@@ -45,7 +47,7 @@ impl<const A: usize, const B: usize> MoleculeBuilder<A, B> {
         let (atom_ring_sizes, bond_ring_sizes) = ring_sizes(&rings, &neighbours, &self.bonds);
         let (aromatic_atoms, aromatic_bonds) =
             aromaticity::perceive(&self.atoms, &self.bonds, &neighbours, &rings);
-        Ok(Molecule {
+        let mut molecule = Molecule {
             atoms: self.atoms,
             bonds: self.bonds,
             tetrahedral: self.tetrahedral,
@@ -55,7 +57,9 @@ impl<const A: usize, const B: usize> MoleculeBuilder<A, B> {
             bond_ring_sizes,
             aromatic_atoms,
             aromatic_bonds,
-        })
+        };
+        molecule.drop_idle_stereo();
+        Ok(molecule)
     }
 }
 
@@ -113,6 +117,18 @@ impl<const A: usize, const B: usize> Molecule<A, B> {
             .filter(|n| self.element(n.atom) == Some(Element::H))
             .count() as u8;
         self.atoms.get(atom).map_or(0, |a| a.hydrogens) + explicit
+    }
+
+    /// The stereo marks of tetrahedral centres, to drop or invert.
+    pub(super) fn tetrahedral_mut(&mut self) -> &mut Vec<TetrahedralStereo, A> {
+        &mut self.tetrahedral
+    }
+
+    /// Replaces the stereo mark of a bond.
+    pub(super) fn set_bond_stereo(&mut self, bond: usize, stereo: Option<DoubleBondStereo>) {
+        if let Some(bond) = self.bonds.get_mut(bond) {
+            bond.stereo = stereo;
+        }
     }
 
     /// The net charge, elementary charges.
