@@ -2,6 +2,8 @@
 
 mod aromaticity;
 mod canonical;
+mod cycle_families;
+mod cycle_space;
 mod element;
 mod error;
 mod formula;
@@ -16,6 +18,7 @@ mod matching;
 )]
 mod molecule;
 mod normalise;
+mod ring_systems;
 mod rings;
 mod spelling;
 mod stereo;
@@ -30,5 +33,6 @@ pub use graph::{
     TetrahedralStereo,
 };
 pub use molecule::Molecule;
+pub use ring_systems::RingSystems;
 pub use rings::{RingSet, RingSizes};
 pub use valence::implicit_hydrogens;
