@@ -4,6 +4,8 @@
 //! structures.
 
 pub mod case;
+pub mod document;
 pub mod fit;
+pub mod render;
 pub mod review;
 pub mod structure;

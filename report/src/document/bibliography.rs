@@ -59,7 +59,9 @@ impl Reference {
 
 /// `A and B and others` as `A, B et al.`.
 fn names(people: &str) -> String {
-    people.replace(" and others", " et al.").replace(" and ", "; ")
+    people
+        .replace(" and others", " et al.")
+        .replace(" and ", "; ")
 }
 
 /// The entries of a bibliography.
@@ -200,7 +202,11 @@ mod tests {
         let bibliography = Bibliography::of_project();
         assert_eq!(bibliography.entries.len(), entries);
         for entry in &bibliography.entries {
-            assert!(entry.field("title").is_some() || entry.field("journal").is_some(), "{}", entry.key);
+            assert!(
+                entry.field("title").is_some() || entry.field("journal").is_some(),
+                "{}",
+                entry.key
+            );
         }
     }
 
@@ -208,15 +214,16 @@ mod tests {
     fn an_article_reads_as_one_cites_it() {
         let entry = Bibliography::of_project();
         let entry = entry.find("wiberg-fenoglio-1968").unwrap().formatted();
-        assert!(entry.plain().starts_with("Wiberg, K. B.; Fenoglio, R. A.: J. Am. Chem. Soc., 90 (1968) 3395, combustion"));
+        assert!(entry.plain().starts_with(
+            "Wiberg, K. B.; Fenoglio, R. A.: J. Am. Chem. Soc., 90 (1968) 3395, combustion"
+        ));
     }
 
     #[test]
     fn numbers_follow_the_order_of_citation() {
         let mut citations = Citations::new(Bibliography::of_project());
-        let texts = ["gum-2008", "common practice", "crc2014", "gum-2008"].map(|source| {
-            Inline::new().with(citations.cite(source)).plain()
-        });
+        let texts = ["gum-2008", "common practice", "crc2014", "gum-2008"]
+            .map(|source| Inline::new().with(citations.cite(source)).plain());
         assert_eq!(texts, ["[1]", "common practice", "[2]", "[1]"]);
         assert_eq!(citations.references().count(), 2);
     }

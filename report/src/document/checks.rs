@@ -11,7 +11,10 @@ pub(super) fn blocks(checks: &[CheckValue], citations: &mut Citations) -> Vec<Bl
     if checks.is_empty() {
         return Vec::new();
     }
-    let off = checks.iter().filter(|check| check.outcome == CheckOutcome::Off).count();
+    let off = checks
+        .iter()
+        .filter(|check| check.outcome == CheckOutcome::Off)
+        .count();
     let mut blocks = vec![
         heading(2, "Check values"),
         "The program recomputed these published values when it made this report. Agreement shows that the program is the one that was checked; it says nothing of a substance that no one has measured.".into(),

@@ -13,11 +13,18 @@ pub(super) fn blocks(gas: &FormationEnthalpy, citations: &mut Citations) -> Vec<
     if gas.comparisons.is_empty() {
         blocks.push(Block::Note(Note {
             kind: NoteKind::Caution,
-            paragraphs: vec!["No measured value of this molecule was used: the number below is an estimate.".into()],
+            paragraphs: vec![
+                "No measured value of this molecule was used: the number below is an estimate."
+                    .into(),
+            ],
         }));
     } else {
         blocks.push(comparisons(&gas.comparisons, citations));
-        blocks.extend(gas.comparisons.iter().filter_map(|comparison| verdict(comparison, citations)));
+        blocks.extend(
+            gas.comparisons
+                .iter()
+                .filter_map(|comparison| verdict(comparison, citations)),
+        );
     }
     blocks.push(values(gas));
     blocks.push(evidence(gas, citations));
@@ -29,12 +36,26 @@ fn comparisons(comparisons: &[Comparison], citations: &mut Citations) -> Block {
         .iter()
         .map(|comparison| {
             let measured = &comparison.measured;
-            let value = rounded(measured.quantity.value_kj_per_mol, measured.quantity.u_kj_per_mol);
-            let blind = rounded(comparison.blind.value_kj_per_mol, comparison.blind.u_kj_per_mol);
-            let difference = rounded(comparison.difference_kj_per_mol, comparison.expanded_kj_per_mol);
+            let value = rounded(
+                measured.quantity.value_kj_per_mol,
+                measured.quantity.u_kj_per_mol,
+            );
+            let blind = rounded(
+                comparison.blind.value_kj_per_mol,
+                comparison.blind.u_kj_per_mol,
+            );
+            let difference = rounded(
+                comparison.difference_kj_per_mol,
+                comparison.expanded_kj_per_mol,
+            );
             let source = Inline::new().with(citations.cite(&measured.source));
             vec![
-                if measured.from_case { "case file" } else { "project data" }.into(),
+                if measured.from_case {
+                    "case file"
+                } else {
+                    "project data"
+                }
+                .into(),
                 source,
                 value.value.into(),
                 value.uncertainty.into(),
@@ -69,7 +90,10 @@ fn comparisons(comparisons: &[Comparison], citations: &mut Citations) -> Block {
 fn verdict(comparison: &Comparison, citations: &mut Citations) -> Option<Block> {
     let measured = &comparison.measured;
     let source = citations.cite(&measured.source);
-    let difference = rounded(comparison.difference_kj_per_mol.abs(), comparison.expanded_kj_per_mol);
+    let difference = rounded(
+        comparison.difference_kj_per_mol.abs(),
+        comparison.expanded_kj_per_mol,
+    );
     let opening = Inline::new()
         .text(format!(
             "The measured value {} kJ/mol (",
@@ -87,18 +111,24 @@ fn verdict(comparison: &Comparison, citations: &mut Citations) -> Option<Block> 
     } else {
         ("estimate", "measured value")
     };
-    let higher = format!("The {hazardous} is the more hazardous of the two: it puts more energy into the molecule than the {other} does.");
+    let higher = format!(
+        "The {hazardous} is the more hazardous of the two: it puts more energy into the molecule than the {other} does."
+    );
     let (kind, words) = match comparison.agreement {
         Agreement::Agrees => return None,
         Agreement::Disagrees => (
             NoteKind::Warning,
-            opening.strong(format!("{higher} It counts until someone settles it by name in the case file.")),
+            opening.strong(format!(
+                "{higher} It counts until someone settles it by name in the case file."
+            )),
         ),
         Agreement::Settled => {
             let settled = comparison.settled_by.as_deref().unwrap_or("no words given");
             (
                 NoteKind::Information,
-                opening.text(format!("{higher} The case file settles it: ")).emphasis(settled),
+                opening
+                    .text(format!("{higher} The case file settles it: "))
+                    .emphasis(settled),
             )
         }
     };

@@ -25,4 +25,5 @@ pub use drawing::{Drawing, PlottedStrain, StrainPlot, StrainedSystem, StructureD
 pub use inline::{Inline, Span, subscripted};
 pub use inputs::{Digest, Header, Inputs, Particulars, RingReference};
 pub use notes::blocks_from_markdown;
+pub(crate) use notes::is_safe_url;
 pub use report::report;

@@ -92,7 +92,9 @@ impl Reader {
                 self.strong = self.strong.saturating_sub(1);
                 self.close();
             }
-            TagEnd::Paragraph | TagEnd::BlockQuote(_) | TagEnd::HtmlBlock | TagEnd::Item => self.close_paragraph(),
+            TagEnd::Paragraph | TagEnd::BlockQuote(_) | TagEnd::HtmlBlock | TagEnd::Item => {
+                self.close_paragraph()
+            }
             TagEnd::CodeBlock => {
                 if let Some(code) = self.code.take() {
                     self.blocks.push(Block::Code(code));
@@ -121,7 +123,10 @@ impl Reader {
         }
         let text = text.to_owned();
         let span = match (&self.link, self.strong, self.emphasis) {
-            (Some(url), _, _) => Span::Link { text, url: url.clone() },
+            (Some(url), _, _) => Span::Link {
+                text,
+                url: url.clone(),
+            },
             (None, 0, 0) => Span::Text(text),
             (None, 0, _) => Span::Emphasis(text),
             (None, _, _) => Span::Strong(text),
@@ -161,7 +166,13 @@ fn merged(inline: &Inline) -> Inline {
             (Some(Span::Text(before)), Span::Text(text))
             | (Some(Span::Strong(before)), Span::Strong(text))
             | (Some(Span::Emphasis(before)), Span::Emphasis(text)) => before.push_str(text),
-            (Some(Span::Link { text: before, url: same }), Span::Link { text, url }) if same == url => before.push_str(text),
+            (
+                Some(Span::Link {
+                    text: before,
+                    url: same,
+                }),
+                Span::Link { text, url },
+            ) if same == url => before.push_str(text),
             _ => spans.push(span.clone()),
         }
     }
@@ -176,7 +187,9 @@ mod tests {
     fn nothing_dangerous_survives() {
         let markdown = "# Big\n\n<script>alert(1)</script>\n\n![x](data:image/png;base64,AA) [a](JAVASCRIPT:x) [b](https://example.org)\n\n- one\n  - two\n\n```\n<i>\n```\n";
         let blocks = blocks_from_markdown(markdown);
-        assert!(matches!(&blocks[0], Block::Paragraph(p) if p.spans() == [Span::Strong("Big".into())]));
+        assert!(
+            matches!(&blocks[0], Block::Paragraph(p) if p.spans() == [Span::Strong("Big".into())])
+        );
         let links: Vec<_> = blocks
             .iter()
             .filter_map(|block| match block {
@@ -190,8 +203,20 @@ mod tests {
             })
             .collect();
         assert_eq!(links, ["https://example.org"]);
-        assert!(blocks.iter().any(|b| matches!(b, Block::List { items, .. } if items.len() == 2)));
-        assert!(blocks.iter().any(|b| matches!(b, Block::Code(code) if code == "<i>\n")));
-        assert!(!blocks.iter().any(|b| matches!(b, Block::Heading { .. } | Block::Figure(_))));
+        assert!(
+            blocks
+                .iter()
+                .any(|b| matches!(b, Block::List { items, .. } if items.len() == 2))
+        );
+        assert!(
+            blocks
+                .iter()
+                .any(|b| matches!(b, Block::Code(code) if code == "<i>\n"))
+        );
+        assert!(
+            !blocks
+                .iter()
+                .any(|b| matches!(b, Block::Heading { .. } | Block::Figure(_)))
+        );
     }
 }

@@ -9,7 +9,13 @@ use super::report::{heading, particulars_table};
 pub(super) fn bibliography(citations: &Citations) -> Vec<Block> {
     let items: Vec<_> = citations
         .references()
-        .map(|reference| reference.formatted().text(" Key: ").code(reference.key.as_str()).text("."))
+        .map(|reference| {
+            reference
+                .formatted()
+                .text(" Key: ")
+                .code(reference.key.as_str())
+                .text(".")
+        })
         .collect();
     if items.is_empty() {
         return Vec::new();
@@ -40,7 +46,12 @@ pub(super) fn blocks(inputs: &Inputs<'_>) -> Vec<Block> {
             rows: inputs
                 .digests
                 .iter()
-                .map(|digest| vec![Inline::from(digest.of.as_str()), Inline::new().code(digest.sha256.as_str())])
+                .map(|digest| {
+                    vec![
+                        Inline::from(digest.of.as_str()),
+                        Inline::new().code(digest.sha256.as_str()),
+                    ]
+                })
                 .collect(),
         }),
     ]

@@ -40,7 +40,11 @@ pub(super) fn heading(level: u8, text: impl Into<Inline>) -> Block {
 }
 
 /// A table of two columns, a name and what it stands for.
-pub(super) fn particulars_table(caption: Inline, heads: [&str; 2], rows: Vec<(&str, Inline)>) -> Block {
+pub(super) fn particulars_table(
+    caption: Inline,
+    heads: [&str; 2],
+    rows: Vec<(&str, Inline)>,
+) -> Block {
     Block::Table(Table {
         caption,
         columns: heads.map(Column::words).to_vec(),

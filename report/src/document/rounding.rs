@@ -3,9 +3,6 @@
 //! # Source
 //! `gum-2008`, 7.2.6.
 
-/// Kilojoules in a thermochemical kilocalorie, exact by definition.
-pub const KJ_PER_KCAL: f64 = 4.184;
-
 /// A value and its uncertainty, rounded together.
 #[derive(Clone, Debug, PartialEq, Eq)]
 pub struct Rounded {

@@ -1,9 +1,11 @@
 //! The strain of a substance: per ring system and in total.
 
+use tautring_core::quantities::KJ_PER_KCAL;
+
 use super::block::{Block, Column, Table};
 use super::inline::Inline;
 use super::report::heading;
-use super::rounding::{KJ_PER_KCAL, rounded, uncertainty};
+use super::rounding::{rounded, uncertainty};
 use crate::review::{RingStrain, SubstanceReview};
 
 pub(super) fn blocks(review: &SubstanceReview, k: f64) -> Vec<Block> {
@@ -41,8 +43,15 @@ pub(super) fn atom_numbers(atoms: &[usize]) -> String {
 
 fn table(review: &SubstanceReview, k: f64) -> Block {
     let strain = &review.strain;
-    let mut rows: Vec<_> = strain.ring_systems.iter().map(|system| row(system, k)).collect();
-    let value = rounded(strain.quantity.value_kj_per_mol, strain.quantity.u_kj_per_mol);
+    let mut rows: Vec<_> = strain
+        .ring_systems
+        .iter()
+        .map(|system| row(system, k))
+        .collect();
+    let value = rounded(
+        strain.quantity.value_kj_per_mol,
+        strain.quantity.u_kj_per_mol,
+    );
     let per_gram = rounded(strain.j_per_g, k * strain.u_j_per_g);
     let expanded = k * strain.quantity.u_kj_per_mol;
     rows.push(vec![
@@ -51,7 +60,9 @@ fn table(review: &SubstanceReview, k: f64) -> Block {
         Inline::new().strong(value.value),
         value.uncertainty.into(),
         uncertainty(expanded).into(),
-        rounded(strain.value_kcal_per_mol, expanded / KJ_PER_KCAL).interval().into(),
+        rounded(strain.value_kcal_per_mol, expanded / KJ_PER_KCAL)
+            .interval()
+            .into(),
         per_gram.interval().into(),
     ]);
     Block::Table(Table {
@@ -80,7 +91,12 @@ fn row(system: &RingStrain, k: f64) -> Vec<Inline> {
         value.value.into(),
         value.uncertainty.into(),
         uncertainty(expanded).into(),
-        rounded(quantity.value_kj_per_mol / KJ_PER_KCAL, expanded / KJ_PER_KCAL).interval().into(),
+        rounded(
+            quantity.value_kj_per_mol / KJ_PER_KCAL,
+            expanded / KJ_PER_KCAL,
+        )
+        .interval()
+        .into(),
         "—".into(),
     ]
 }

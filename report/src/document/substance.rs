@@ -38,7 +38,11 @@ pub(super) fn blocks(
         blocks.push(heading(4, "Flags"));
         blocks.push(Block::List {
             ordered: false,
-            items: review.flags.iter().map(|flag| flag.as_str().into()).collect(),
+            items: review
+                .flags
+                .iter()
+                .map(|flag| flag.as_str().into())
+                .collect(),
         });
     }
     blocks
@@ -54,12 +58,19 @@ fn figure(index: usize, review: &SubstanceReview, k: f64) -> Block {
             atoms: system.atoms.clone(),
             label: format!(
                 "{} kJ/mol",
-                rounded(system.quantity.value_kj_per_mol, k * system.quantity.u_kj_per_mol).value
+                rounded(
+                    system.quantity.value_kj_per_mol,
+                    k * system.quantity.u_kj_per_mol
+                )
+                .value
             ),
         })
         .collect();
     let marks = match &strained[..] {
-        [] => format!("No ring system has a strain over {} kJ/mol.", fixed(MARKED_FROM_KJ_PER_MOL, 0)),
+        [] => format!(
+            "No ring system has a strain over {} kJ/mol.",
+            fixed(MARKED_FROM_KJ_PER_MOL, 0)
+        ),
         _ => format!(
             "Heavy hatched bonds: ring systems with a strain over {} kJ/mol, with their strain. Small numbers: atoms as in the tables.",
             fixed(MARKED_FROM_KJ_PER_MOL, 0)
@@ -67,14 +78,31 @@ fn figure(index: usize, review: &SubstanceReview, k: f64) -> Block {
     };
     let told: Vec<_> = strained
         .iter()
-        .map(|system| format!("atoms {}, {}", strain::atom_numbers(&system.atoms), system.label))
+        .map(|system| {
+            format!(
+                "atoms {}, {}",
+                strain::atom_numbers(&system.atoms),
+                system.label
+            )
+        })
         .collect();
     Block::Figure(Box::new(Figure {
         id: format!("structure-{}", index + 1),
-        caption: Inline::from(format!("Structure of {}. {marks} Configurations are not drawn.", review.name)),
+        caption: Inline::from(format!(
+            "Structure of {}. {marks} Configurations are not drawn.",
+            review.name
+        )),
         alternative: match &told[..] {
-            [] => format!("Structural formula of {}, {}; no strained ring is marked.", review.name, review.formula),
-            _ => format!("Structural formula of {}, {}; marked as strained: {}.", review.name, review.formula, told.join("; ")),
+            [] => format!(
+                "Structural formula of {}, {}; no strained ring is marked.",
+                review.name, review.formula
+            ),
+            _ => format!(
+                "Structural formula of {}, {}; marked as strained: {}.",
+                review.name,
+                review.formula,
+                told.join("; ")
+            ),
         },
         drawing: Drawing::Structure(StructureDrawing {
             structure: review.structure.clone(),
@@ -85,16 +113,27 @@ fn figure(index: usize, review: &SubstanceReview, k: f64) -> Block {
 
 fn identity(review: &SubstanceReview, particulars: Option<&Particulars>) -> Block {
     let mut rows = vec![
-        ("Structure as given", Inline::new().code(review.input.as_str())),
+        (
+            "Structure as given",
+            Inline::new().code(review.input.as_str()),
+        ),
         ("Formula", subscripted(&review.formula).into()),
-        ("Molar mass", format!("{} g/mol", fixed(review.molar_mass_g_per_mol, 2)).into()),
+        (
+            "Molar mass",
+            format!("{} g/mol", fixed(review.molar_mass_g_per_mol, 2)).into(),
+        ),
         (
             "Oxygen balance to CO₂, H₂O, N₂, SO₂ and HX",
             format!("{} %", fixed(review.oxygen_balance_percent, 1)).into(),
         ),
     ];
     if let Some(particulars) = particulars {
-        rows.extend(particulars.facts.iter().map(|(name, fact)| (name.as_str(), fact.as_str().into())));
+        rows.extend(
+            particulars
+                .facts
+                .iter()
+                .map(|(name, fact)| (name.as_str(), fact.as_str().into())),
+        );
     }
     particulars_table(
         format!("What {} is.", review.name).into(),

@@ -1,11 +1,13 @@
 //! The summary: every substance in one table, the plot, the flags.
 
+use tautring_core::quantities::KJ_PER_KCAL;
+
 use super::block::{Align, Block, Column, Figure, Note, NoteKind, Table};
 use super::drawing::{Drawing, PlottedStrain, StrainPlot};
 use super::inline::{Inline, subscripted};
 use super::inputs::Inputs;
 use super::report::heading;
-use super::rounding::{KJ_PER_KCAL, fixed, rounded};
+use super::rounding::{fixed, rounded};
 use crate::review::{Basis, SubstanceReview};
 
 pub(super) fn blocks(inputs: &Inputs<'_>) -> Vec<Block> {
@@ -27,10 +29,18 @@ fn table(inputs: &Inputs<'_>) -> Block {
             vec![
                 Inline::from(review.name.as_str()),
                 subscripted(&review.formula).into(),
-                rounded(strain.quantity.value_kj_per_mol, expanded).interval().into(),
-                rounded(strain.value_kcal_per_mol, expanded / KJ_PER_KCAL).interval().into(),
-                rounded(strain.j_per_g, k * strain.u_j_per_g).interval().into(),
-                rounded(gas.quantity.value_kj_per_mol, gas.expanded_kj_per_mol).interval().into(),
+                rounded(strain.quantity.value_kj_per_mol, expanded)
+                    .interval()
+                    .into(),
+                rounded(strain.value_kcal_per_mol, expanded / KJ_PER_KCAL)
+                    .interval()
+                    .into(),
+                rounded(strain.j_per_g, k * strain.u_j_per_g)
+                    .interval()
+                    .into(),
+                rounded(gas.quantity.value_kj_per_mol, gas.expanded_kj_per_mol)
+                    .interval()
+                    .into(),
                 basis_word(gas.basis).into(),
                 flag_count(review.flags.len()).into(),
             ]
@@ -79,10 +89,11 @@ fn flags(reviews: &[SubstanceReview]) -> Option<Block> {
     let paragraphs: Vec<_> = reviews
         .iter()
         .flat_map(|review| {
-            review
-                .flags
-                .iter()
-                .map(|flag| Inline::new().strong(format!("{}: ", review.name)).text(flag.as_str()))
+            review.flags.iter().map(|flag| {
+                Inline::new()
+                    .strong(format!("{}: ", review.name))
+                    .text(flag.as_str())
+            })
         })
         .collect();
     (!paragraphs.is_empty()).then_some(Block::Note(Note {
@@ -98,15 +109,19 @@ fn plot(inputs: &Inputs<'_>) -> Option<Block> {
         .reviews
         .iter()
         .flat_map(|review| {
-            review.strain.ring_systems.iter().filter_map(move |system| match system.sizes[..] {
-                [size] => Some(PlottedStrain {
-                    size,
-                    strain_kj_per_mol: system.quantity.value_kj_per_mol,
-                    expanded_kj_per_mol: k * system.quantity.u_kj_per_mol,
-                    label: review.name.clone(),
-                }),
-                _ => None,
-            })
+            review
+                .strain
+                .ring_systems
+                .iter()
+                .filter_map(move |system| match system.sizes[..] {
+                    [size] => Some(PlottedStrain {
+                        size,
+                        strain_kj_per_mol: system.quantity.value_kj_per_mol,
+                        expanded_kj_per_mol: k * system.quantity.u_kj_per_mol,
+                        label: review.name.clone(),
+                    }),
+                    _ => None,
+                })
         })
         .collect();
     if case.is_empty() {
@@ -126,7 +141,12 @@ fn plot(inputs: &Inputs<'_>) -> Option<Block> {
         .iter()
         .map(|point: &PlottedStrain| {
             let strain = rounded(point.strain_kj_per_mol, point.expanded_kj_per_mol);
-            format!("{}, ring of {}, {} kJ/mol", point.label, point.size, strain.interval())
+            format!(
+                "{}, ring of {}, {} kJ/mol",
+                point.label,
+                point.size,
+                strain.interval()
+            )
         })
         .collect();
     Some(Block::Figure(Box::new(Figure {
