@@ -24,8 +24,15 @@ const MAX_GENERATORS: usize = 48;
 /// What distinguishes an atom at one step of the refinement: its colour and, sorted, its bonds and neighbours' colours.
 type Surroundings = (u16, [u32; MAX_DEGREE]);
 
-/// One row of a labelled molecule's code: its bonds to lower and higher ranks, then its tetrahedral mark.
-type Row = ([u32; MAX_DEGREE], u8);
+/// One atom's row in the code of a labelled molecule; the rows by rank tell the molecule completely, but for elements and charges.
+#[derive(Clone, Copy, Debug, PartialEq, Eq, PartialOrd, Ord)]
+pub struct CodeRow {
+    /// One entry for each neighbour, ascending, then `u32::MAX`: its rank times 256, plus 16 times the bond (1, 2, 3, aromatic 4), plus 1
+    /// or 2 for the configuration of a double bond.
+    pub bonds: [u32; MAX_DEGREE],
+    /// 1 or 2 for the configuration of a tetrahedral centre, 0 where none is stated.
+    pub centre: u8,
+}
 
 /// The canonical order of a molecule's atoms.
 #[derive(Clone, Debug, PartialEq, Eq)]
@@ -143,11 +150,11 @@ impl<const A: usize, const B: usize> Molecule<A, B> {
             .find(|mark| usize::from(mark.centre) == atom)
     }
 
-    /// The row of the code that belongs to one atom under a labelling.
-    pub(super) fn code_row(&self, ranks: &[u16], atom: usize) -> Row {
+    /// The row of the code that belongs to one atom when the atoms have these ranks.
+    pub fn code_row(&self, ranks: &[u16], atom: usize) -> CodeRow {
         let rank = |atom: u16| ranks.get(usize::from(atom)).copied().unwrap_or(0);
-        let mut row = [u32::MAX; MAX_DEGREE];
-        for (slot, n) in row.iter_mut().zip(self.neighbours(atom)) {
+        let mut bonds = [u32::MAX; MAX_DEGREE];
+        for (slot, n) in bonds.iter_mut().zip(self.neighbours(atom)) {
             let bond = usize::from(n.bond);
             let side = self
                 .bonds()
@@ -155,11 +162,11 @@ impl<const A: usize, const B: usize> Molecule<A, B> {
                 .map_or(0, |b| self.double_bond_code(b, &rank));
             *slot = u32::from(rank(n.atom)) << 8 | self.bond_kind(bond) << 4 | side;
         }
-        row.sort_unstable();
-        let mark = self
+        bonds.sort_unstable();
+        let centre = self
             .tetrahedral_mark(atom)
             .map_or(0, |mark| tetrahedral_code(mark, &rank));
-        (row, mark)
+        CodeRow { bonds, centre }
     }
 
     /// 1 or 2 for the two configurations, told by the lowest-ranking neighbour at each end.
@@ -278,8 +285,7 @@ impl<'a, const A: usize, const B: usize> Search<'a, A, B> {
             let cell = colours.get(usize::from(last)).copied();
             let orbits = self.orbits();
             let next = (usize::from(last) + 1..colours.len()).find(|&atom| {
-                colours.get(atom).copied() == cell
-                    && orbits.get(atom).copied() == Some(atom as u16)
+                colours.get(atom).copied() == cell && orbits.get(atom).copied() == Some(atom as u16)
             });
             if let Some(atom) = next {
                 let _ = self.path.push(atom as u16);

@@ -2,6 +2,7 @@
 
 mod aromaticity;
 mod canonical;
+mod centres;
 mod cycle_families;
 mod cycle_space;
 mod element;
@@ -18,13 +19,15 @@ mod matching;
 )]
 mod molecule;
 mod normalise;
+mod pi_electrons;
 mod ring_systems;
 mod rings;
 mod spelling;
 mod stereo;
 mod valence;
 
-pub use canonical::CanonicalOrder;
+pub use canonical::{CanonicalOrder, CodeRow};
+pub use centres::CentreKind;
 pub use element::Element;
 pub use error::MoleculeError;
 pub use formula::Formula;

@@ -1,9 +1,10 @@
-//! Stereo marks that say nothing: both configurations are the same molecule.
+//! Stereo marks that say nothing: both configurations are the same molecule, or only one can exist.
 
 use core::cmp::Ordering;
 
 use heapless::Vec;
 
+use super::centres::CentreKind;
 use super::graph::{Ligand, TetrahedralStereo};
 use super::molecule::Molecule;
 
@@ -19,6 +20,7 @@ impl<const A: usize, const B: usize> Molecule<A, B> {
                 self.set_bond_stereo(bond, None);
             }
         }
+        self.drop_settled_centres();
         // Marks that fall away together may leave others idle.
         loop {
             let centres: Vec<bool, A> = (0..self.tetrahedral().len())
@@ -37,6 +39,28 @@ impl<const A: usize, const B: usize> Molecule<A, B> {
                 self.set_bond_stereo(bond, None);
             }
         }
+    }
+
+    /// Drops marks that the rings settle: of bridgeheads, unless a free centre of the same ring system is told relative to them.
+    fn drop_settled_centres(&mut self) {
+        if self.tetrahedral().is_empty() {
+            return;
+        }
+        let centres = self.possible_centres();
+        let systems = self.ring_systems();
+        let system = |atom: u16| systems.of_atom(usize::from(atom));
+        let settled = |mark: &TetrahedralStereo| {
+            let listed = |&(atom, _): &(u16, CentreKind)| atom == mark.centre;
+            let free = |&(atom, kind): &(u16, CentreKind)| {
+                kind != CentreKind::Fixed && system(atom) == system(mark.centre)
+            };
+            self.is_rigid_junction(usize::from(mark.centre))
+                && (!centres.iter().any(listed) || !centres.iter().any(free))
+        };
+        let keep: Vec<bool, A> = self.tetrahedral().iter().map(|m| !settled(m)).collect();
+        let mut keep = keep.iter();
+        self.tetrahedral_mut()
+            .retain(|_| keep.next() == Some(&true));
     }
 
     fn idle_centre(&self, mark: usize) -> bool {

@@ -36,7 +36,7 @@ pub(super) struct Drawing<'a> {
 impl Drawing<'_> {
     /// The configuration of a tetrahedral atom; none where it is not drawn, flat, or no tetrahedral atom.
     pub(super) fn tetrahedral(&self, centre: usize) -> Option<TetrahedralStereo> {
-        let atom = self.atoms.get(centre)?;
+        let atom = *self.atoms.get(centre)?;
         let around: Vec<&DrawnBond> = self.around(centre).collect();
         let wavy = around
             .iter()
@@ -44,9 +44,7 @@ impl Drawing<'_> {
         if wavy || atom.hydrogens > 1 || !is_tetrahedral(atom, &around) {
             return None;
         }
-        let marked = around
-            .iter()
-            .any(|b| b.wedge != 0 && b.atoms[0] == centre);
+        let marked = around.iter().any(|b| b.wedge != 0 && b.atoms[0] == centre);
         if !self.three_dimensional && !marked {
             return None;
         }
@@ -93,11 +91,18 @@ impl Drawing<'_> {
             let wavy = around
                 .iter()
                 .any(|b| b.either && b.order == BondOrder::Single);
-            let cumulated = around.iter().filter(|b| b.order != BondOrder::Single).count() > 1;
+            let cumulated = around
+                .iter()
+                .filter(|b| b.order != BondOrder::Single)
+                .count()
+                > 1;
             if wavy || cumulated {
                 return None;
             }
-            let mut others = around.iter().map(|b| other(b, at)).filter(|&o| o != partner);
+            let mut others = around
+                .iter()
+                .map(|b| other(b, at))
+                .filter(|&o| o != partner);
             others.next()
         };
         let (first, second) = (end(a, b)?, end(b, a)?);
@@ -131,7 +136,7 @@ impl Drawing<'_> {
 }
 
 /// Four ligands in a tetrahedron, one of which may be a hydrogen or, on sulfur and phosphorus, the lone pair.
-fn is_tetrahedral(atom: &Atom, around: &[&DrawnBond]) -> bool {
+fn is_tetrahedral(atom: Atom, around: &[&DrawnBond]) -> bool {
     let saturated = around.iter().all(|b| b.order == BondOrder::Single);
     let ligands = around.len() + usize::from(atom.hydrogens);
     match atom.element {

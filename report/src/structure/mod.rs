@@ -1,7 +1,12 @@
 //! Structures on the host: SMILES and Molfile/SDF in, the core's molecular graph out.
 
 mod capacity;
+mod configuration;
+mod coordinates;
 mod error;
+mod flag;
+mod identity;
+mod molfile;
 mod outline;
 mod smiles;
 #[expect(
@@ -11,5 +16,8 @@ mod smiles;
 mod structure;
 
 pub use capacity::{HostMolecule, MAX_ATOMS, MAX_BONDS};
+pub use coordinates::Coordinates;
 pub use error::StructureError;
-pub use structure::Structure;
+pub use flag::{StereoFlag, StereoKind};
+pub use identity::{identity, skeleton};
+pub use structure::{Structure, read_structures};

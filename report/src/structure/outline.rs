@@ -42,6 +42,12 @@ impl Outline {
                 limit: MAX_LENGTH,
             });
         }
+        if let Some((start, alien)) = smiles.char_indices().find(|(_, c)| !c.is_ascii_graphic()) {
+            return Err(StructureError::Syntax {
+                message: alien_character(alien),
+                span: start..start + alien.len_utf8(),
+            });
+        }
         let mut outline = Self::default();
         let mut branches = Vec::new();
         let mut current = None;
@@ -173,22 +179,19 @@ fn token_end(smiles: &str, start: usize) -> Result<usize, StructureError> {
         }
         'C' if rest.starts_with("Cl") => 2,
         'B' if rest.starts_with("Br") => 2,
-        _ if first.is_ascii_graphic() => 1,
-        _ => {
-            let what = if first.is_whitespace() {
-                "white space inside the SMILES: give the string alone, the name elsewhere".into()
-            } else {
-                format!(
-                    "'{first}' does not belong in a SMILES: only ASCII letters, digits and - = # : / \\ ( ) [ ] % @ + do"
-                )
-            };
-            return Err(StructureError::Syntax {
-                message: what,
-                span: start..start + first.len_utf8(),
-            });
-        }
+        _ => 1,
     };
     Ok(start + length)
+}
+
+fn alien_character(c: char) -> String {
+    if c.is_whitespace() {
+        "white space inside the SMILES: give the string alone, the name elsewhere".into()
+    } else {
+        format!(
+            "{c:?} does not belong in a SMILES: only ASCII letters, digits and - = # : / \\ ( ) [ ] % @ + do"
+        )
+    }
 }
 
 /// The number of a ring-closure token `3`, `%12`, `%(123)`.

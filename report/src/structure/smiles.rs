@@ -1,7 +1,7 @@
 //! SMILES in: atoms, bonds, hydrogens, aromatic marks and stereo marks turned into the core's builder.
 //!
 //! # Source
-//! The language is OpenSMILES (`opensmiles-2016`); the grammar is read by the crate `smiles-rs`.
+//! The language is `OpenSMILES` (`opensmiles-2016`); the grammar is read by the crate `smiles-rs`.
 
 use std::ops::Range;
 

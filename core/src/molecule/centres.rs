@@ -1,0 +1,97 @@
+//! Which atoms can be tetrahedral stereocentres.
+//!
+//! Told from symmetry classes, which overlooks a centre that differs from its mirror image only through the configuration of two
+//! otherwise equal branches.
+
+use heapless::Vec;
+
+use super::graph::{BondOrder, MAX_DEGREE};
+use super::molecule::Molecule;
+
+/// Two rings fused at a bond are joined cis without saying so up to this sum of their sizes; trans-bicyclo\[4.1.0\]heptane (9) was made.
+const ALWAYS_CIS: usize = 8;
+
+/// How an atom can be a tetrahedral centre.
+#[derive(Clone, Copy, Debug, PartialEq, Eq)]
+pub enum CentreKind {
+    /// Four different ligands.
+    Different,
+    /// Two ligands alike that close a ring: cis or trans to another centre of the ring.
+    AcrossRing,
+    /// A bridgehead or a fusion of small rings whose four ligands differ; the rings leave its configuration no choice.
+    Fixed,
+}
+
+impl<const A: usize, const B: usize> Molecule<A, B> {
+    /// The atoms that can be tetrahedral centres, by index.
+    pub fn possible_centres(&self) -> Vec<(u16, CentreKind), A> {
+        let classes = self.symmetry_classes();
+        let centres: Vec<(u16, CentreKind), A> = (0..self.atoms().len())
+            .filter_map(|atom| Some((atom as u16, self.centre_kind(&classes, atom)?)))
+            .collect();
+        // Cis or trans to what? Without a partner in the ring the atom is no centre.
+        let partner = |atom: u16| {
+            let mut rings = self.rings().iter().filter(|ring| ring.contains(&atom));
+            rings.any(|ring| {
+                let other = |(a, _): &(u16, CentreKind)| *a != atom && ring.contains(a);
+                centres.iter().any(other)
+            })
+        };
+        let is_centre =
+            |(atom, kind): &&(u16, CentreKind)| *kind != CentreKind::AcrossRing || partner(*atom);
+        centres.iter().filter(is_centre).copied().collect()
+    }
+
+    fn centre_kind(&self, classes: &[u16], atom: usize) -> Option<CentreKind> {
+        let a = self.atoms().get(atom)?;
+        let neighbours = self.neighbours(atom);
+        let single = |bond: u16| {
+            let bond = self.bonds().get(usize::from(bond));
+            bond.is_some_and(|b| b.order == BondOrder::Single)
+        };
+        let four = neighbours.len() + usize::from(a.hydrogens) == 4 && a.hydrogens < 2;
+        if !four || !neighbours.iter().all(|n| single(n.bond)) {
+            return None;
+        }
+        let ligands: Vec<(Option<&u16>, bool), MAX_DEGREE> = neighbours
+            .iter()
+            .map(|n| {
+                let ring = !self.bond_ring_sizes(usize::from(n.bond)).is_empty();
+                (classes.get(usize::from(n.atom)), ring)
+            })
+            .collect();
+        let (mut alike, mut alike_in_ring) = (0, 0);
+        for (i, (class, ring)) in ligands.iter().enumerate() {
+            for (other, other_ring) in ligands.iter().skip(i + 1) {
+                alike += usize::from(class == other);
+                alike_in_ring += usize::from(class == other && *ring && *other_ring);
+            }
+        }
+        match (alike, alike_in_ring, self.is_rigid_junction(atom)) {
+            (0, _, true) => Some(CentreKind::Fixed),
+            (0, _, false) => Some(CentreKind::Different),
+            (1, 1, false) => Some(CentreKind::AcrossRing),
+            _ => None,
+        }
+    }
+
+    /// Whether rings meet at an atom in a way that settles its configuration: all but two larger rings that share one bond.
+    pub(super) fn is_rigid_junction(&self, atom: usize) -> bool {
+        let in_ring = |bond: u16| !self.bond_ring_sizes(usize::from(bond)).is_empty();
+        let ring_bonds = self
+            .neighbours(atom)
+            .iter()
+            .filter(|n| in_ring(n.bond))
+            .count();
+        let holds = |ring: &&[u16]| ring.iter().any(|&a| usize::from(a) == atom);
+        let mut rings = self.rings().iter().filter(holds);
+        match (rings.next(), rings.next(), rings.next()) {
+            _ if ring_bonds < 3 => false,
+            (Some(one), Some(two), None) => {
+                let shared = one.iter().filter(|a| two.contains(a)).count();
+                shared > 2 || (shared == 2 && one.len() + two.len() <= ALWAYS_CIS)
+            }
+            _ => true,
+        }
+    }
+}
