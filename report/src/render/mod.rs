@@ -12,3 +12,6 @@ pub use folder::write_all;
 pub use html::html;
 pub use json::{contract, json};
 pub use markdown::markdown;
+
+#[cfg(test)]
+mod tests;
