@@ -35,8 +35,8 @@ pub enum Block {
     Code(String),
     /// A table.
     Table(Table),
-    /// A figure; the large drawing is behind a pointer.
-    Figure(Box<Figure>),
+    /// A figure.
+    Figure(Figure),
     /// Something to be heeded.
     Note(Note),
 }
@@ -143,7 +143,7 @@ impl Document {
     /// The figures in their order.
     pub fn figures(&self) -> impl Iterator<Item = &Figure> {
         self.blocks.iter().filter_map(|block| match block {
-            Block::Figure(figure) => Some(figure.as_ref()),
+            Block::Figure(figure) => Some(figure),
             _ => None,
         })
     }

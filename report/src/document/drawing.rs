@@ -5,8 +5,8 @@ use crate::structure::Structure;
 /// The content of a figure.
 #[derive(Clone, Debug)]
 pub enum Drawing {
-    /// A structural formula.
-    Structure(StructureDrawing),
+    /// A structural formula; the molecular graph is large.
+    Structure(Box<StructureDrawing>),
     /// Strain against ring size.
     StrainPlot(StrainPlot),
 }

@@ -112,7 +112,7 @@ fn verdict(comparison: &Comparison, citations: &mut Citations) -> Option<Block> 
         ("estimate", "measured value")
     };
     let higher = format!(
-        "The {hazardous} is the more hazardous of the two: it puts more energy into the molecule than the {other} does."
+        "The {hazardous} is the more hazardous of the two: its enthalpy of formation is the higher one, and more energy can come out than the {other} says."
     );
     let (kind, words) = match comparison.agreement {
         Agreement::Agrees => return None,

@@ -1,5 +1,7 @@
 //! What a report is made from.
 
+use std::fmt::Write as _;
+
 use serde::Serialize;
 use sha2::{Digest as _, Sha256};
 
@@ -86,10 +88,11 @@ impl Digest {
     /// assert!(digest.sha256.starts_with("ba7816bf8f01cfea"));
     /// ```
     pub fn new(of: &str, bytes: &[u8]) -> Self {
-        let hexadecimal = Sha256::digest(bytes)
-            .iter()
-            .map(|byte| format!("{byte:02x}"))
-            .collect();
+        let mut hexadecimal = String::new();
+        for byte in Sha256::digest(bytes) {
+            // Writing to a string cannot fail.
+            let _ = write!(hexadecimal, "{byte:02x}");
+        }
         Self {
             of: of.to_owned(),
             sha256: hexadecimal,

@@ -67,7 +67,9 @@ impl Reader {
                 self.close();
                 self.strong += 1;
             }
-            Tag::Paragraph | Tag::BlockQuote(_) | Tag::HtmlBlock => self.close_paragraph(),
+            Tag::Paragraph | Tag::BlockQuote(_) | Tag::HtmlBlock | Tag::Item => {
+                self.close_paragraph();
+            }
             Tag::CodeBlock(_) => {
                 self.close();
                 self.code = Some(String::new());
@@ -76,7 +78,6 @@ impl Reader {
                 self.close_paragraph();
                 self.lists.push(first.is_some());
             }
-            Tag::Item => self.close_paragraph(),
             Tag::Strong => self.strong += 1,
             Tag::Emphasis => self.emphasis += 1,
             Tag::Link { dest_url, .. } if is_safe_url(&dest_url) => {
@@ -93,7 +94,7 @@ impl Reader {
                 self.close();
             }
             TagEnd::Paragraph | TagEnd::BlockQuote(_) | TagEnd::HtmlBlock | TagEnd::Item => {
-                self.close_paragraph()
+                self.close_paragraph();
             }
             TagEnd::CodeBlock => {
                 if let Some(code) = self.code.take() {

@@ -81,12 +81,11 @@ fn to_places(value: f64, places: i32) -> String {
     if !value.is_finite() {
         return UNKNOWN.to_owned();
     }
-    let text = match usize::try_from(places) {
-        Ok(decimals) => format!("{value:.decimals$}"),
-        Err(_) => {
-            let unit = 10_f64.powi(-places);
-            format!("{:.0}", (value / unit).round() * unit)
-        }
+    let text = if let Ok(decimals) = usize::try_from(places) {
+        format!("{value:.decimals$}")
+    } else {
+        let unit = 10_f64.powi(-places);
+        format!("{:.0}", (value / unit).round() * unit)
     };
     with_minus_sign(&text)
 }

@@ -86,7 +86,7 @@ fn figure(index: usize, review: &SubstanceReview, k: f64) -> Block {
             )
         })
         .collect();
-    Block::Figure(Box::new(Figure {
+    Block::Figure(Figure {
         id: format!("structure-{}", index + 1),
         caption: Inline::from(format!(
             "Structure of {}. {marks} Configurations are not drawn.",
@@ -104,11 +104,11 @@ fn figure(index: usize, review: &SubstanceReview, k: f64) -> Block {
                 told.join("; ")
             ),
         },
-        drawing: Drawing::Structure(StructureDrawing {
+        drawing: Drawing::Structure(Box::new(StructureDrawing {
             structure: review.structure.clone(),
             strained,
-        }),
-    }))
+        })),
+    })
 }
 
 fn identity(review: &SubstanceReview, particulars: Option<&Particulars>) -> Block {

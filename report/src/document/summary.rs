@@ -2,7 +2,7 @@
 
 use tautring_core::quantities::KJ_PER_KCAL;
 
-use super::block::{Align, Block, Column, Figure, Note, NoteKind, Table};
+use super::block::{Block, Column, Figure, Note, NoteKind, Table};
 use super::drawing::{Drawing, PlottedStrain, StrainPlot};
 use super::inline::{Inline, subscripted};
 use super::inputs::Inputs;
@@ -42,14 +42,10 @@ fn table(inputs: &Inputs<'_>) -> Block {
                     .interval()
                     .into(),
                 basis_word(gas.basis).into(),
-                flag_count(review.flags.len()).into(),
+                review.flags.len().to_string().into(),
             ]
         })
         .collect();
-    let numbers = |head| Column {
-        head: String::from(head),
-        align: Align::Right,
-    };
     Block::Table(Table {
         caption: format!(
             "Strain and gas-phase enthalpy of formation at 298.15 K, each with its expanded uncertainty U (95 %, for the true value; k = {} for estimates).",
@@ -59,12 +55,12 @@ fn table(inputs: &Inputs<'_>) -> Block {
         columns: vec![
             Column::words("Substance"),
             Column::words("Formula"),
-            numbers("Strain ± U, kJ/mol"),
-            numbers("Strain ± U, kcal/mol"),
-            numbers("Strain ± U, J/g"),
-            numbers("Enthalpy of formation ± U, kJ/mol"),
+            Column::numbers("Strain ± U, kJ/mol"),
+            Column::numbers("Strain ± U, kcal/mol"),
+            Column::numbers("Strain ± U, J/g"),
+            Column::numbers("Enthalpy of formation ± U, kJ/mol"),
             Column::words("Basis of the enthalpy"),
-            Column::words("Flags"),
+            Column::numbers("Flags (below)"),
         ],
         rows,
     })
@@ -74,14 +70,6 @@ pub(super) const fn basis_word(basis: Basis) -> &'static str {
     match basis {
         Basis::Measured => "measured",
         Basis::Estimated => "estimated",
-    }
-}
-
-fn flag_count(count: usize) -> String {
-    match count {
-        0 => "none".to_owned(),
-        1 => "1, below".to_owned(),
-        _ => format!("{count}, below"),
     }
 }
 
@@ -149,10 +137,10 @@ fn plot(inputs: &Inputs<'_>) -> Option<Block> {
             )
         })
         .collect();
-    Some(Block::Figure(Box::new(Figure {
+    Some(Block::Figure(Figure {
         id: "strain-by-ring-size".to_owned(),
         caption: "Strain of the ring systems that are a single ring (filled) among the measured unsubstituted cycloalkanes (open), against ring size. Bars are the expanded uncertainty U (95 %) of the true value. Fused, bridged and spiro systems have no single ring size and stand in the tables only.".into(),
         alternative: format!("Strain against ring size. {}.", told.join("; ")),
         drawing: Drawing::StrainPlot(StrainPlot { background, case }),
-    })))
+    }))
 }

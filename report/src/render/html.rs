@@ -147,16 +147,12 @@ impl<'a> Rewriter<'a> {
                 _ => None,
             })
             .collect();
-        let id = (0..)
-            .map(|n| {
-                if n == 0 {
-                    slug.clone()
-                } else {
-                    format!("{slug}-{n}")
-                }
-            })
-            .find(|id| !self.ids.contains(id))
-            .unwrap_or_default();
+        let mut id = slug.clone();
+        let mut count = 0;
+        while self.ids.contains(&id) {
+            count += 1;
+            id = format!("{slug}-{count}");
+        }
         self.ids.insert(id.clone());
         id
     }
@@ -173,7 +169,7 @@ impl<'a> Rewriter<'a> {
         };
         let figures = self.figures;
         let svg = figures.get(dest_url.as_ref())?;
-        let rest = after(events, &TagEnd::Paragraph);
+        let rest = after(events, TagEnd::Paragraph);
         self.markup("<figure>");
         self.markup(svg.as_str());
         let rest = self.caption(rest, "Figure ", "figcaption").unwrap_or(rest);
@@ -185,7 +181,7 @@ impl<'a> Rewriter<'a> {
     fn table<'e>(&mut self, events: &'e [Event<'a>]) -> Option<&'e [Event<'a>]> {
         let captioned = is_caption(events, "Table ");
         let table = if captioned {
-            after(events, &TagEnd::Paragraph)
+            after(events, TagEnd::Paragraph)
         } else {
             events
         };
@@ -209,13 +205,12 @@ impl<'a> Rewriter<'a> {
             return None;
         }
         self.markup(format!("<{element}>"));
-        let end = TagEnd::Paragraph;
         let mut rest = events.get(1..)?;
         while !matches!(rest.first(), None | Some(Event::End(TagEnd::Paragraph))) {
             rest = self.step(rest);
         }
         self.markup(format!("</{element}>"));
-        Some(after(rest, &end))
+        Some(after(rest, TagEnd::Paragraph))
     }
 
     /// A block quote that begins with the word of a note.
@@ -267,10 +262,10 @@ fn is_caption(events: &[Event<'_>], word: &str) -> bool {
 }
 
 /// What follows the first end of that kind.
-fn after<'e, 'a>(events: &'e [Event<'a>], end: &TagEnd) -> &'e [Event<'a>] {
+fn after<'e, 'a>(events: &'e [Event<'a>], end: TagEnd) -> &'e [Event<'a>] {
     let position = events
         .iter()
-        .position(|event| matches!(event, Event::End(tag) if tag == end));
+        .position(|event| matches!(event, Event::End(tag) if *tag == end));
     position.and_then(|at| events.get(at + 1..)).unwrap_or(&[])
 }
 

@@ -5,7 +5,7 @@ use crate::document::{Align, Block, Document, Figure, Inline, Note, Span, Table}
 /// Folder of the figures, beside the Markdown file.
 pub(super) const FIGURES: &str = "figures";
 
-/// The document as Markdown (CommonMark with tables).
+/// The document as Markdown with tables.
 pub fn markdown(document: &Document) -> String {
     let mut writer = Writer::default();
     writer.paragraph(&format!("# {}", escaped(&document.title)));

@@ -22,14 +22,20 @@ fn comparison(measured: f64, agreement: Agreement, from_case: bool) -> Compariso
     Comparison {
         measured: MeasuredEnthalpy {
             quantity: quantity(measured, 0.3),
-            source: if from_case { "Laboratory | report *7*" } else { "crc2014" }.to_owned(),
+            source: if from_case {
+                "Laboratory | report *7*"
+            } else {
+                "crc2014"
+            }
+            .to_owned(),
             from_case,
         },
         blind,
         difference_kj_per_mol: measured - blind.value_kj_per_mol,
         expanded_kj_per_mol: 3.9,
         agreement,
-        settled_by: (agreement == Agreement::Settled).then(|| "The safety office: wrong sample.".to_owned()),
+        settled_by: (agreement == Agreement::Settled)
+            .then(|| "The safety office: wrong sample.".to_owned()),
     }
 }
 
@@ -52,7 +58,11 @@ fn review(name: &str, smiles: &str, comparisons: Vec<Comparison>) -> SubstanceRe
         oxygen_balance_percent: -342.2,
         gas: FormationEnthalpy {
             quantity: quantity(53.52, 0.3),
-            basis: if comparisons.is_empty() { Basis::Estimated } else { Basis::Measured },
+            basis: if comparisons.is_empty() {
+                Basis::Estimated
+            } else {
+                Basis::Measured
+            },
             expanded_kj_per_mol: 0.6,
             estimate: quantity(53.9, 0.7),
             comparisons,
@@ -104,7 +114,9 @@ impl Sample {
                 date: "2026-03-01".to_owned(),
                 author: "A. Writer".to_owned(),
                 revision: "2".to_owned(),
-                notes: Some("# Loud\n\n<script>alert(1)</script>\n\n[x](javascript:alert(1))".to_owned()),
+                notes: Some(
+                    "# Loud\n\n<script>alert(1)</script>\n\n[x](javascript:alert(1))".to_owned(),
+                ),
             },
             particulars: vec![Particulars {
                 substance: "Cyclopropane".to_owned(),
@@ -174,10 +186,16 @@ fn the_same_inputs_give_the_same_bytes() {
         assert!(files.iter().all(|file| file.starts_with(folder.path())));
         let contents: Vec<_> = files
             .iter()
-            .map(|file| (file.strip_prefix(folder.path()).unwrap().to_owned(), fs::read(file).unwrap()))
+            .map(|file| {
+                (
+                    file.strip_prefix(folder.path()).unwrap().to_owned(),
+                    fs::read(file).unwrap(),
+                )
+            })
             .collect();
         // Nothing temporary stays behind.
-        let left = fs::read_dir(folder.path()).unwrap().count() + fs::read_dir(folder.path().join("figures")).unwrap().count();
+        let left = fs::read_dir(folder.path()).unwrap().count()
+            + fs::read_dir(folder.path().join("figures")).unwrap().count();
         assert_eq!(left, files.len() + 1);
         contents
     });
@@ -214,7 +232,10 @@ fn the_page_needs_nothing_and_runs_nothing() {
         assert!(page.contains(good), "{good}");
     }
     assert_eq!(page.matches("<svg").count(), document.figures().count());
-    assert_eq!(page.matches("<caption>").count(), page.matches("<table>").count());
+    assert_eq!(
+        page.matches("<caption>").count(),
+        page.matches("<table>").count()
+    );
     assert_eq!(headings_out_of_order(&page), None);
 }
 
@@ -237,12 +258,27 @@ fn headings_out_of_order(page: &str) -> Option<String> {
 fn json_holds_the_keys_that_other_programs_rely_on() {
     let sample = Sample::new();
     let keys = contract(&sample.reviews[0]);
-    let names: Vec<_> = keys.as_object().unwrap().keys().map(String::as_str).collect();
+    let names: Vec<_> = keys
+        .as_object()
+        .unwrap()
+        .keys()
+        .map(String::as_str)
+        .collect();
     assert_eq!(
         names,
         [
-            "input", "formula", "molar_mass_g_per_mol", "enthalpy_of_formation", "strain", "rings", "account", "openings",
-            "decomposition", "oxygen_balance_percent", "evidence", "flags"
+            "input",
+            "formula",
+            "molar_mass_g_per_mol",
+            "enthalpy_of_formation",
+            "strain",
+            "rings",
+            "account",
+            "openings",
+            "decomposition",
+            "oxygen_balance_percent",
+            "evidence",
+            "flags"
         ]
     );
     assert_eq!(keys["enthalpy_of_formation"]["gas"]["basis"], "measured");
@@ -250,7 +286,10 @@ fn json_holds_the_keys_that_other_programs_rely_on() {
     assert!(keys["account"]["bend_kj_per_mol"].is_null());
 
     let report: serde_json::Value = serde_json::from_str(&json(&sample.inputs()).unwrap()).unwrap();
-    assert_eq!(report["substances"][0]["details"]["gas"]["comparisons"][1]["agreement"], "disagrees");
+    assert_eq!(
+        report["substances"][0]["details"]["gas"]["comparisons"][1]["agreement"],
+        "disagrees"
+    );
     assert_eq!(report["digests"][0]["sha256"].as_str().unwrap().len(), 64);
 }
 

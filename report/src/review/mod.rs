@@ -5,6 +5,6 @@
 mod findings;
 
 pub use findings::{
-    Agreement, Basis, CheckOutcome, CheckValue, Comparison, Evidence, FormationEnthalpy, MeasuredEnthalpy, Quantity,
-    RingStrain, Strain, SubstanceReview,
+    Agreement, Basis, CheckOutcome, CheckValue, Comparison, Evidence, FormationEnthalpy,
+    MeasuredEnthalpy, Quantity, RingStrain, Strain, SubstanceReview,
 };

@@ -6,12 +6,12 @@ use std::collections::VecDeque;
 use std::f64::consts::{PI, TAU};
 
 use super::canvas::Point;
-use super::overlap::Legibility;
+use super::overlap::{Legibility, distance};
 
 /// A cage in the plane.
 #[derive(Clone, Debug)]
 pub(super) struct Projection {
-    /// The atoms; the mean bond length is 1.
+    /// The atoms; the mean bond is about 1 long.
     pub(super) points: Vec<Point>,
     /// Distance from the eye, larger is farther.
     pub(super) depths: Vec<f64>,
@@ -19,7 +19,7 @@ pub(super) struct Projection {
 
 const STARTS: usize = 6;
 const STEPS: usize = 250;
-const VIEWS: usize = 600;
+const VIEWS: usize = 1200;
 
 /// Draws a connected set of atoms, numbered from 0, that is bonded so.
 pub(super) fn layout(atoms: usize, bonds: &[[usize; 2]]) -> Projection {
@@ -159,12 +159,12 @@ fn projected(space: &[[f64; 3]], eye: [f64; 3], bonds: &[[usize; 2]]) -> Project
         .iter()
         .map(|&p| [dot(p, right), -dot(p, up)])
         .collect();
-    let sum: f64 = bonds
-        .iter()
-        .map(|&[a, b]| super::overlap::distance(points[a], points[b]))
-        .sum();
-    let scale = if sum > 0.0 {
-        bonds.len() as f64 / sum
+    let lengths = || bonds.iter().map(|&[a, b]| distance(points[a], points[b]));
+    let mean = lengths().sum::<f64>() / bonds.len().max(1) as f64;
+    // The mean bond gets length 1, or more where that leaves the most foreshortened one too short.
+    let shortest = lengths().fold(mean, f64::min).max(0.45 * mean);
+    let scale = if mean > 0.0 {
+        (0.7 / shortest).max(1.0 / mean)
     } else {
         1.0
     };
@@ -177,11 +177,46 @@ fn projected(space: &[[f64; 3]], eye: [f64; 3], bonds: &[[usize; 2]]) -> Project
     }
 }
 
-/// Room between atoms and bonds counts most, then bonds that are not foreshortened away, then few crossings.
+/// Room between atoms and bonds counts most, then bonds that are neither foreshortened away nor in line with each other (an atom that
+/// seems to lie on a straight line is not seen), then few crossings and bonds alike in length.
 fn score(points: &[Point], bonds: &[[usize; 2]]) -> f64 {
     let found = Legibility::of(points, bonds);
-    3.0 * found.atoms.min(0.7) + 4.0 * found.atom_to_bond.min(0.35) + found.shortest.min(0.8)
+    let (sharpest, straightest) = angles(points, bonds);
+    3.0 * found.atoms.min(0.7)
+        + 5.0 * found.atom_to_bond.min(0.4)
+        + 2.0 * found.shortest.min(0.85)
+        + 1.5 * sharpest.min(0.7)
+        + 2.0 * (PI - straightest).min(0.5)
         - 0.12 * found.crossings as f64
+        - 0.3 * (found.longest / found.shortest.max(1e-6) - 1.0).min(3.0)
+}
+
+/// The smallest angle between two bonds of one atom, and the largest at an atom of two bonds, rad.
+fn angles(points: &[Point], bonds: &[[usize; 2]]) -> (f64, f64) {
+    let (mut sharpest, mut straightest) = (PI, 0.0_f64);
+    for (atom, &at) in points.iter().enumerate() {
+        let others: Vec<usize> = bonds
+            .iter()
+            .filter_map(|&[a, b]| match atom {
+                _ if a == atom => Some(b),
+                _ if b == atom => Some(a),
+                _ => None,
+            })
+            .collect();
+        for (i, &first) in others.iter().enumerate() {
+            for &second in &others[..i] {
+                let [p, q] = [first, second].map(|n| [points[n][0] - at[0], points[n][1] - at[1]]);
+                let angle = (p[0] * q[1] - p[1] * q[0])
+                    .abs()
+                    .atan2(p[0] * q[0] + p[1] * q[1]);
+                sharpest = sharpest.min(angle);
+                if others.len() == 2 {
+                    straightest = straightest.max(angle);
+                }
+            }
+        }
+    }
+    (sharpest, straightest)
 }
 
 /// Turns the picture so that its bonds run level and upright as far as they can.

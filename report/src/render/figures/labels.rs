@@ -37,7 +37,7 @@ impl AtomLabel {
         let isotope = if here.isotope == 0 {
             String::new()
         } else {
-            superscript(here.isotope.into())
+            superscript(here.isotope)
         };
         let charge = charge(here.charge);
         let at = points[atom];

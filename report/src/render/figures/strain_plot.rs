@@ -98,11 +98,12 @@ impl Axes {
         canvas.line([left, top], [left, bottom], 1.0, Ink::Plain, None);
         canvas.line([left, base], [right, base], 1.0, Ink::Plain, None);
         clearance.block_stroke([left, base], [right, base], 3.0);
-        clearance.block_stroke([left, top], [left, bottom], 3.0);
         // Words stay inside the area.
-        clearance.block_stroke([right + 8.0, top], [right + 8.0, bottom], 3.0);
-        clearance.block_stroke([left, top - 6.0], [right, top - 6.0], 3.0);
-        clearance.block_stroke([left, bottom + 4.0], [right, bottom + 4.0], 3.0);
+        let far = 1e4;
+        clearance.block(span([-far, -far], [left + 2.0, far]));
+        clearance.block(span([right + 6.0, -far], [far, far]));
+        clearance.block(span([-far, -far], [far, top - 6.0]));
+        clearance.block(span([-far, bottom - 2.0], [far, far]));
         let steps = ((self.high - self.low) / self.step).round() as i32;
         for index in 0..=steps {
             let strain = self.low + self.step * f64::from(index);
@@ -179,7 +180,7 @@ fn bar(
 ) {
     let [low, high] =
         [-1.0, 1.0].map(|sign| axes.y(point.strain_kj_per_mol + sign * point.expanded_kj_per_mol));
-    clearance.block(span(at, at).grown(RADIUS + 1.5));
+    clearance.block(span(at, at).grown(RADIUS + 2.5));
     // A bar that the point would cover is left out.
     if low - high > 2.0 * RADIUS {
         canvas.line([at[0], low], [at[0], high], 1.3, ink, None);

@@ -1,8 +1,7 @@
 //! Structural formulas with strained rings marked.
 
 use super::bonds::{BondPlan, HATCHING};
-use super::canvas::{Anchor, Rectangle};
-use super::canvas::{Canvas, Ink, Point};
+use super::canvas::{Anchor, Canvas, Ink, Point, Rectangle};
 use super::clearance::{Clearance, widest_gap};
 use super::labels::AtomLabel;
 use super::layout::Layout;
@@ -41,16 +40,17 @@ pub(super) fn draw(drawing: &StructureDrawing) -> Canvas {
         labels: &boxes,
         strained: &strained,
     };
-    for bond in 0..molecule.bonds().len() {
+    for (bond, &marked) in strained.iter().enumerate() {
         plan.draw(bond, &mut canvas);
         let [from, to] = plan.ends(bond);
-        clearance.block_stroke(from, to, if strained[bond] { HATCHING + 2.0 } else { 5.0 });
+        clearance.block_stroke(from, to, if marked { HATCHING + 2.0 } else { 5.0 });
     }
     for label in labels.iter().flatten() {
         label.draw(&mut canvas);
     }
     for part in boxes.iter().flatten() {
-        clearance.block(*part);
+        // A number close by would read as part of the formula.
+        clearance.block(part.grown(4.0));
     }
     numbers(molecule, &points, &mut clearance, &mut canvas);
     for system in &drawing.strained {
@@ -90,7 +90,7 @@ fn numbers(
             &text,
             NUMBER_SIZE,
             at,
-            &[8.0, 10.0, 12.0, 15.0, 18.0, 22.0],
+            &[8.0, 10.0, 12.0, 15.0, 18.0, 21.0, 24.0, 28.0],
             widest_gap(directions),
         );
         canvas.words(&text, place, NUMBER_SIZE, Anchor::Middle, Ink::Faint);
