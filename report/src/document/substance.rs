@@ -89,7 +89,7 @@ fn figure(index: usize, review: &SubstanceReview, k: f64) -> Block {
     Block::Figure(Figure {
         id: format!("structure-{}", index + 1),
         caption: Inline::from(format!(
-            "Structure of {}. {marks} Configurations are not drawn.",
+            "Structure of {}. {marks} Configurations are not to be read from the drawing.",
             review.name
         )),
         alternative: match &told[..] {

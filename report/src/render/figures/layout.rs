@@ -3,6 +3,7 @@
 use super::assembly;
 use super::cage;
 use super::canvas::Point;
+use super::crowding;
 use super::overlap::Legibility;
 use super::planar;
 use crate::structure::HostMolecule;
@@ -22,7 +23,10 @@ pub(super) struct Layout {
 impl Layout {
     pub(super) fn of(molecule: &HostMolecule) -> Self {
         let bonds = bonds(molecule);
-        let flat = planar::layout(molecule);
+        let mut flat = planar::layout(molecule);
+        if let Some(points) = &mut flat {
+            crowding::spread(points, &bonds);
+        }
         let cages = cages(molecule, flat.as_deref());
         match flat {
             Some(points) if cages.is_empty() => Self {

@@ -8,6 +8,7 @@ mod bonds;
 mod cage;
 mod canvas;
 mod clearance;
+mod crowding;
 mod labels;
 mod layout;
 mod overlap;

@@ -1,5 +1,7 @@
 //! What every picture of a structure must keep.
 
+use std::collections::BTreeSet;
+
 use super::*;
 use crate::render::figures::layout::Layout;
 use crate::render::figures::overlap::Legibility;
@@ -98,6 +100,37 @@ fn no_two_atoms_overlap() {
         let found = Legibility::of(&points, &crate::render::figures::layout::bonds(&molecule));
         assert!(found.atoms > 0.35, "{smiles}: {found:?}");
     }
+}
+
+/// The same for every structure of the measured data that can be read.
+#[test]
+fn no_two_atoms_overlap_in_measured_molecules() {
+    let table = concat!(env!("CARGO_MANIFEST_DIR"), "/../data/measurements.csv");
+    let mut rows = csv::Reader::from_path(table).unwrap();
+    let column = rows
+        .headers()
+        .unwrap()
+        .iter()
+        .position(|head| head == "smiles")
+        .unwrap();
+    let smiles: BTreeSet<String> = rows
+        .records()
+        .map(|row| row.unwrap()[column].to_owned())
+        .collect();
+    let structures = smiles
+        .iter()
+        .filter_map(|smiles| Structure::from_smiles(smiles).ok());
+    let mut count = 0;
+    for Structure {
+        molecule, input, ..
+    } in structures
+    {
+        let points = Layout::of(&molecule).points;
+        let found = Legibility::of(&points, &crate::render::figures::layout::bonds(&molecule));
+        assert!(found.atoms > 0.35, "{input}: {found:?}");
+        count += 1;
+    }
+    assert!(count > 1000, "only {count} structures were read");
 }
 
 /// Reads the pictures back from their SVG: with letters as wide as those of a wide sans-serif font, no word leaves the frame.
