@@ -1,6 +1,6 @@
 //! The document: what a report says, in one model that knows nothing of Markdown, HTML or SVG.
 //!
-//! [`report`] turns what the review found into a [`Document`]; the writers in [`crate::render`] turn that into files. Every number
+//! [`report()`] turns what the review found into a [`Document`]; the writers in [`crate::render`] turn that into files. Every number
 //! that a reader sees passes through [`rounding`], and every source through [`Citations`].
 
 mod bibliography;
