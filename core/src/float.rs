@@ -16,3 +16,20 @@ pub(crate) fn exp(x: f64) -> f64 {
 pub(crate) fn ln(x: f64) -> f64 {
     libm::log(x)
 }
+
+/// Absolute value of `x`, exact.
+pub(crate) fn abs(x: f64) -> f64 {
+    libm::fabs(x)
+}
+
+/// Sine and cosine of `x` (radians), in this order; one argument reduction serves both.
+pub(crate) fn sin_cos(x: f64) -> (f64, f64) {
+    libm::sincos(x)
+}
+
+/// Angle of the point (`x`, `y`) seen from the origin, radians, from -pi to pi, both included.
+///
+/// Sharper than an arc cosine near 0 and pi, where a cosine no longer tells angles apart.
+pub(crate) fn atan2(y: f64, x: f64) -> f64 {
+    libm::atan2(y, x)
+}

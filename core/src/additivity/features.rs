@@ -3,6 +3,7 @@
 use heapless::Vec;
 
 use super::Level;
+use super::deviation::Deviation;
 use super::error::AdditivityError;
 use super::key::Key;
 
@@ -21,7 +22,7 @@ pub struct Term {
 #[derive(Clone, Debug, Default, PartialEq)]
 pub struct Features<const F: usize> {
     terms: Vec<Term, F>,
-    molecules: f64,
+    deviation: Deviation,
 }
 
 impl<const F: usize> Features<F> {
@@ -29,20 +30,18 @@ impl<const F: usize> Features<F> {
     pub const fn new() -> Self {
         Self {
             terms: Vec::new(),
-            molecules: 0.0,
+            deviation: Deviation::none(),
         }
     }
 
-    /// The sum of the squared stoichiometric numbers of the molecules counted: 1 for one molecule.
-    ///
-    /// Each molecule deviates from additivity on its own, so the variances of the deviations add up with it.
-    pub const fn molecules(&self) -> f64 {
-        self.molecules
+    /// What adds to the variance of the deviation from additivity.
+    pub const fn deviation(&self) -> &Deviation {
+        &self.deviation
     }
 
-    /// Takes note of one molecule.
-    pub(super) const fn add_molecule(&mut self) {
-        self.molecules += 1.0;
+    /// Takes note of one more contribution to the deviation.
+    pub(super) fn add_deviation(&mut self, contribution: usize) {
+        self.deviation.add_one(contribution);
     }
 
     /// The terms in ascending order of their keys.
@@ -78,7 +77,7 @@ impl<const F: usize> Features<F> {
         other: &Features<G>,
         factor: f64,
     ) -> Result<(), AdditivityError> {
-        self.molecules += factor * factor * other.molecules;
+        self.deviation.add_scaled(&other.deviation, factor);
         other
             .terms
             .iter()
@@ -96,7 +95,7 @@ impl<const F: usize> Features<F> {
     /// The same terms as a bare sum of increments, with no molecule's deviation from additivity.
     #[must_use]
     pub fn increments_only(mut self) -> Self {
-        self.molecules = 0.0;
+        self.deviation = Deviation::default();
         self
     }
 }

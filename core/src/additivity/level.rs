@@ -11,16 +11,26 @@ pub enum Level {
     Element,
     /// Atoms by type and number of hydrogens.
     Atom,
+    /// Bonds by their two elements and their order.
+    BondOrder,
+    /// Bonds by the classes of their two atoms (element, saturated or not) and their order.
+    BondElements,
     /// Bonds by the types of their two atoms and their order.
     Bond,
+    /// Groups with the neighbours by class only.
+    GroupElements,
     /// Groups after Benson: a central atom with its neighbours.
     Group,
     /// Pairs of adjacent groups.
     GroupPair,
     /// A group with the groups around it.
     Shell,
+    /// Pairs of atoms two bonds apart, by class.
+    GeminalElements,
     /// Pairs of atoms two bonds apart, with the atom between.
     Geminal,
+    /// Pairs of atoms three bonds apart across a bond that is in no ring, by class.
+    VicinalElements,
     /// Pairs of atoms three bonds apart across a bond that is in no ring.
     Vicinal,
     /// Unavoidable gauche contacts across a bond that is in no ring.
@@ -31,34 +41,41 @@ pub enum Level {
     Cis,
     /// Substituents in ortho, meta and para position of an aromatic ring.
     AromaticPair,
-    /// Aromatic atoms by the aromatic rings that they are in.
+    /// Aromatic rings by size, and atoms that fuse them.
     AromaticRing,
     /// Rings by size, smooth in size.
     RingSize,
     /// Rings by size and composition, smooth in size.
     RingClass,
-    /// Ring atoms by the sizes of the rings that they are in.
+    /// Atoms and bonds by the sizes of the rings that they are in, whatever the elements.
+    RingSite,
+    /// Ring atoms by type and the sizes of the rings that they are in.
     RingAtom,
-    /// Ring bonds by the sizes of the rings that they are in.
+    /// Ring bonds by types and the sizes of the rings that they are in.
     RingBond,
     /// Pairs of rings by the atoms that they share.
     RingFusion,
-    /// Pairs of atoms three bonds apart across a ring bond.
+    /// Pairs of substituents on adjacent ring atoms.
     RingVicinal,
     /// Relative configuration in rings.
     RingConfiguration,
 }
 
 impl Level {
-    /// Every level, coarse to fine.
-    pub const ALL: [Self; 20] = [
+    /// Every level, in the order of the keys.
+    pub const ALL: [Self; 26] = [
         Self::Element,
         Self::Atom,
+        Self::BondOrder,
+        Self::BondElements,
         Self::Bond,
+        Self::GroupElements,
         Self::Group,
         Self::GroupPair,
         Self::Shell,
+        Self::GeminalElements,
         Self::Geminal,
+        Self::VicinalElements,
         Self::Vicinal,
         Self::Gauche,
         Self::OneFive,
@@ -67,6 +84,7 @@ impl Level {
         Self::AromaticRing,
         Self::RingSize,
         Self::RingClass,
+        Self::RingSite,
         Self::RingAtom,
         Self::RingBond,
         Self::RingFusion,
@@ -79,11 +97,16 @@ impl Level {
         match self {
             Self::Element => "element",
             Self::Atom => "atom",
+            Self::BondOrder => "bond order",
+            Self::BondElements => "bond elements",
             Self::Bond => "bond",
+            Self::GroupElements => "group elements",
             Self::Group => "group",
             Self::GroupPair => "group pair",
             Self::Shell => "shell",
+            Self::GeminalElements => "geminal elements",
             Self::Geminal => "geminal pair",
+            Self::VicinalElements => "vicinal elements",
             Self::Vicinal => "vicinal pair",
             Self::Gauche => "gauche",
             Self::OneFive => "1,5 contact",
@@ -92,6 +115,7 @@ impl Level {
             Self::AromaticRing => "aromatic ring",
             Self::RingSize => "ring size",
             Self::RingClass => "ring class",
+            Self::RingSite => "ring site",
             Self::RingAtom => "ring atom",
             Self::RingBond => "ring bond",
             Self::RingFusion => "ring fusion",

@@ -4,7 +4,9 @@
 //! smooth levels), δ a heavy-tailed deviation of the molecule and ε the heavy-tailed error of a measurement.
 
 pub mod cholesky;
+mod deviation;
 mod error;
+mod estimate;
 mod features;
 mod key;
 mod level;
@@ -13,10 +15,12 @@ mod model;
 mod prior;
 mod skeleton;
 
+pub use deviation::{CONTRIBUTIONS, Deviation, RINGS};
 pub use error::AdditivityError;
+pub use estimate::Estimate;
 pub use features::{Features, Term};
 pub use key::Key;
 pub use level::Level;
 pub use levels::{count, count_strain};
-pub use model::{Estimate, MAX_LEFT_OUT, Model};
+pub use model::{MAX_LEFT_OUT, Model};
 pub use prior::Prior;

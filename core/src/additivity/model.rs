@@ -2,6 +2,7 @@
 
 use super::cholesky::{dot, factorise, packed_len, solve_lower, solve_upper};
 use super::error::AdditivityError;
+use super::estimate::Estimate;
 use super::features::{Features, Term};
 use super::key::Key;
 use super::prior::Prior;
@@ -31,25 +32,6 @@ pub struct Model<'a> {
     pub values: &'a [f64],
     /// Packed lower Cholesky factor of K.
     pub factor: &'a [f64],
-}
-
-/// An estimated enthalpy, or difference of enthalpies, with what makes up its uncertainty.
-#[derive(Clone, Copy, Debug, PartialEq)]
-#[cfg_attr(feature = "serde", derive(serde::Serialize))]
-pub struct Estimate {
-    /// The estimate, kJ/mol.
-    pub value_kj_per_mol: f64,
-    /// Variance of the additive part, kJ²/mol².
-    pub model_variance: f64,
-    /// Variance of the deviation from additivity, kJ²/mol².
-    pub deviation_variance: f64,
-}
-
-impl Estimate {
-    /// Standard uncertainty of the true value, kJ/mol.
-    pub fn u_kj_per_mol(&self) -> f64 {
-        crate::float::sqrt(self.model_variance + self.deviation_variance)
-    }
 }
 
 impl Model<'_> {
@@ -179,7 +161,8 @@ impl Model<'_> {
             value_kj_per_mol: value,
             // Rounding may push a variance of nothing below zero.
             model_variance: (prior - explained).max(0.0),
-            deviation_variance: features.molecules() * self.prior.deviation_variance(),
+            tail_variance: self.prior.squared_scale(features.deviation()),
+            tail_degrees_of_freedom: self.prior.degrees_of_freedom,
         }
     }
 

@@ -1,6 +1,7 @@
 //! The prior: how much a feature of each level may contribute.
 
 use super::Level;
+use super::deviation::{CONTRIBUTIONS, Deviation};
 use super::features::Term;
 use crate::float::{exp, ln};
 
@@ -12,8 +13,9 @@ pub struct Prior {
     pub tau_kj_per_mol: [f64; Level::ALL.len()],
     /// Width of the squared-exponential correlation between ring sizes, in the natural logarithm of the size.
     pub ring_width: f64,
-    /// Scale of the heavy-tailed deviation of a molecule from additivity, kJ/mol.
-    pub deviation_kj_per_mol: f64,
+    /// Scale of the heavy-tailed deviation of a molecule from additivity for one heavy atom of each element in
+    /// [`Element::ALL`](crate::molecule::Element::ALL), then for one non-aromatic ring, kJ/mol; their squares add up.
+    pub deviation_kj_per_mol: [f64; CONTRIBUTIONS],
     /// Degrees of freedom of the heavy-tailed distributions.
     pub degrees_of_freedom: f64,
 }
@@ -56,10 +58,13 @@ impl Prior {
             .unwrap_or(0.0)
     }
 
-    /// Variance of the deviation of one molecule from additivity, kJ²/mol²: scale² ν / (ν − 2).
-    pub fn deviation_variance(&self) -> f64 {
-        let nu = self.degrees_of_freedom;
-        self.deviation_kj_per_mol * self.deviation_kj_per_mol * nu / (nu - 2.0)
+    /// Squared scale of a deviation from additivity, kJ²/mol².
+    pub fn squared_scale(&self, deviation: &Deviation) -> f64 {
+        deviation
+            .counts()
+            .iter()
+            .zip(self.deviation_kj_per_mol)
+            .fold(0.0, |sum, (count, scale)| sum + count * scale * scale)
     }
 
     /// Prior correlation of the strain of rings of two sizes.

@@ -4,6 +4,9 @@ use heapless::Vec;
 
 use crate::molecule::{Atom, BondOrder, Element, Molecule, Neighbour};
 
+/// Rings of this size and larger are one kind of environment; their sizes tell apart in the smooth levels.
+const LARGE_RING: usize = 7;
+
 /// Type of an atom: element, charge, aromaticity and the partners of its multiple bonds, packed into 16 bits.
 ///
 /// A carbonyl carbon, an olefinic carbon, a nitrile carbon and an aromatic carbon are four types; an aromatic bond does not
@@ -52,6 +55,13 @@ impl AtomType {
     /// The type as a token of a key.
     pub(super) fn token(self) -> u64 {
         u64::from(self.0)
+    }
+
+    /// The class as a token of a key: element, charge, aromatic or not, and whether there are double and triple bonds.
+    pub(super) fn class_token(self) -> u64 {
+        let double = u16::from(self.0 >> 7 & 0xf != 0) << 7;
+        let second = u16::from(self.0 >> 11 & 0xf != 0) << 8;
+        u64::from(self.0 & 0x807f | double | second)
     }
 
     /// The element alone, as a token of a key.
@@ -106,7 +116,7 @@ impl<'m, const A: usize, const B: usize> Skeleton<'m, A, B> {
             .collect();
         let mut bond_rings: Vec<u64, B> = molecule.bonds().iter().map(|_| 0).collect();
         for ring in molecule.rings().iter() {
-            let size = ring.len().min(63) as u64;
+            let size = ring.len().min(LARGE_RING) as u64;
             let aromatic = is_aromatic_ring(molecule, ring);
             for (atom, bond) in ring_bonds(molecule, ring) {
                 if let Some(Some(site)) = sites.get_mut(atom) {
@@ -191,12 +201,20 @@ impl<'m, const A: usize, const B: usize> Skeleton<'m, A, B> {
     }
 }
 
-/// Whether every bond of a ring is aromatic.
+/// Whether a ring is aromatic: every atom is, and every bond but for at most one, as the shared bond of azulene.
+///
+/// The five-membered ring of fluoranthene, with two bonds between aromatic parts, is none.
 pub(super) fn is_aromatic_ring<const A: usize, const B: usize>(
     molecule: &Molecule<A, B>,
     ring: &[u16],
 ) -> bool {
-    ring_bonds(molecule, ring).all(|(_, bond)| molecule.is_aromatic_bond(bond))
+    let localised = ring_bonds(molecule, ring)
+        .filter(|&(_, bond)| !molecule.is_aromatic_bond(bond))
+        .count();
+    localised <= 1
+        && ring
+            .iter()
+            .all(|&atom| molecule.is_aromatic_atom(usize::from(atom)))
 }
 
 /// Each atom of a ring with the bond that leads to the next one.

@@ -7,6 +7,7 @@
 
 use heapless::Vec;
 
+use super::Element;
 use super::graph::{Atom, Bond, MAX_DEGREE, Neighbour};
 use super::pi_electrons;
 use super::rings::RingSet;
@@ -15,6 +16,9 @@ use super::rings::RingSet;
 const MAX_UNION: u32 = 6;
 /// The largest ring that is looked at together with others.
 const MAX_FUSED_SIZE: usize = 24;
+/// The largest ring in which the lone pair of oxygen or sulfur takes part, unless the atom is in a smaller ring, too: oxonin
+/// is a bent polyene, azonine is aromatic.
+const MAX_CHALCOGEN_RING: usize = 8;
 /// Most rings of conjugated atoms, one per bit; if there are more, only the sizes are looked at that fit in whole.
 const MAX_RINGS: usize = u128::BITS as usize;
 /// Most unions of one number of rings; if there are more, unions of that number and above are not looked at.
@@ -82,10 +86,19 @@ impl<'rings, const A: usize> PiSystem<'rings, A> {
             let holds_both = |ring: &[u16]| ends.iter().all(|atom| ring.contains(atom));
             all_rings.iter().any(holds_both)
         };
-        for &atom in all_rings.iter().flatten() {
+        // Small rings come first: an atom is first met in the smallest of its rings.
+        for (ring, &atom) in all_rings
+            .iter()
+            .flat_map(|r| r.iter().map(move |atom| (r, atom)))
+        {
             let index = usize::from(atom);
             if let Some(slot @ None) = electrons.get_mut(index) {
-                *slot = pi_electrons::of_ring_atom(index, atoms, bonds, neighbours, is_ring_bond);
+                let its = pi_electrons::of_ring_atom(index, atoms, bonds, neighbours, is_ring_bond);
+                let chalcogen = atoms
+                    .get(index)
+                    .is_some_and(|atom| matches!(atom.element, Element::O | Element::S));
+                let bent = chalcogen && its == Some(2) && ring.len() > MAX_CHALCOGEN_RING;
+                *slot = its.filter(|_| !bent);
             }
         }
         let rings = conjugated(all_rings, &electrons);
@@ -247,5 +260,10 @@ fn conjugated<'rings, const B: usize>(
 }
 
 fn members(rings: Rings) -> impl Iterator<Item = usize> {
-    (0..MAX_RINGS).filter(move |ring| rings >> ring & 1 == 1)
+    let mut left = rings;
+    core::iter::from_fn(move || {
+        let lowest = left.trailing_zeros();
+        left &= left.checked_sub(1)?;
+        Some(lowest as usize)
+    })
 }

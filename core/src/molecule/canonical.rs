@@ -1,25 +1,14 @@
 //! A canonical order of the atoms: the same for every order in which they were given.
 //!
-//! Colour refinement splits the atoms by their surroundings; where atoms stay alike, one of them is singled out and refinement goes on,
-//! and of all labellings reached this way the smallest code wins. The code holds bonds and stereo marks, so that the order is exact, not a
-//! hash of colours: cubane and cuneane differ. Automorphisms found on the way cut off branches that could only repeat an earlier code, so
-//! that cages of high symmetry take about as many leaves as their symmetry has generators.
-//!
-//! # Source
-//! `mckay-1981`.
-
-use core::cmp::Ordering;
+//! Here are its parts: colours that tell atoms apart by their surroundings, and the code by which labellings are compared. The code holds
+//! bonds and stereo marks, so that the order is exact, not a hash of colours: cubane and cuneane differ. [`super::canonical_search`] looks
+//! for the labelling with the smallest code.
 
 use heapless::Vec;
 
+use super::canonical_search::Search;
 use super::graph::{Bond, BondOrder, Ligand, MAX_DEGREE, TetrahedralStereo};
 use super::molecule::Molecule;
-
-/// Most refinements before the search settles for the best order so far.
-const MAX_REFINEMENTS: usize = 20_000;
-
-/// Most automorphisms that are remembered; more would only save time.
-const MAX_GENERATORS: usize = 48;
 
 /// What distinguishes an atom at one step of the refinement: its colour and, sorted, its bonds and neighbours' colours.
 type Surroundings = (u16, [u32; MAX_DEGREE]);
@@ -74,7 +63,7 @@ impl<const A: usize, const B: usize> Molecule<A, B> {
         colours
     }
 
-    fn initial_colours(&self, stereo: bool) -> Vec<u16, A> {
+    pub(super) fn initial_colours(&self, stereo: bool) -> Vec<u16, A> {
         let key = |atom: usize| {
             let marked = stereo && self.tetrahedral_mark(atom).is_some();
             self.atoms().get(atom).map(|a| {
@@ -95,7 +84,7 @@ impl<const A: usize, const B: usize> Molecule<A, B> {
     }
 
     /// Splits colours until atoms of one colour have the same surroundings.
-    fn refine(&self, colours: &mut Vec<u16, A>, stereo: bool) {
+    pub(super) fn refine(&self, colours: &mut Vec<u16, A>, stereo: bool) {
         let mut cells = count_cells(colours);
         while cells < colours.len() {
             let mut order: Vec<(Surroundings, u16), A> = (0..colours.len())
@@ -169,6 +158,33 @@ impl<const A: usize, const B: usize> Molecule<A, B> {
         CodeRow { bonds, centre }
     }
 
+    /// A digest of a colouring: its cells, and the rows of all atoms that are alone in their cells together with their neighbours.
+    pub(super) fn digest(&self, colours: &[u16]) -> u64 {
+        let mut sizes = [0_u16; A];
+        for &colour in colours {
+            if let Some(size) = sizes.get_mut(usize::from(colour)) {
+                *size += 1;
+            }
+        }
+        let colour = |atom: usize| colours.get(atom).copied().unwrap_or(0);
+        let alone = |atom: usize| sizes.get(usize::from(colour(atom))) == Some(&1);
+        (0..colours.len())
+            .map(|atom| {
+                let mut digest = stir(0, u64::from(colour(atom)));
+                let around = self.neighbours(atom);
+                if alone(atom) && around.iter().all(|n| alone(usize::from(n.atom))) {
+                    let row = self.code_row(colours, atom);
+                    digest = stir(digest, u64::from(row.centre));
+                    for code in row.bonds {
+                        digest = stir(digest, u64::from(code));
+                    }
+                }
+                digest
+            })
+            // A sum does not depend on the order of the atoms.
+            .fold(0, u64::wrapping_add)
+    }
+
     /// 1 or 2 for the two configurations, told by the lowest-ranking neighbour at each end.
     fn double_bond_code(&self, bond: &Bond, rank: &impl Fn(u16) -> u16) -> u32 {
         let Some(stereo) = bond.stereo else { return 0 };
@@ -184,6 +200,14 @@ impl<const A: usize, const B: usize> Molecule<A, B> {
             != (lowest(b, a) != Some(stereo.second_reference));
         if stereo.same_side == moved { 1 } else { 2 }
     }
+}
+
+/// Stirs a digest with one more number (the finaliser of `SplitMix64`).
+const fn stir(digest: u64, number: u64) -> u64 {
+    let mut x = (digest ^ number).wrapping_add(0x9e37_79b9_7f4a_7c15);
+    x = (x ^ (x >> 30)).wrapping_mul(0xbf58_476d_1ce4_e5b9);
+    x = (x ^ (x >> 27)).wrapping_mul(0x94d0_49bb_1331_11eb);
+    x ^ (x >> 31)
 }
 
 /// 1 or 2 for the two configurations, told by the ligands in order of rank, implicit ones first.
@@ -209,205 +233,4 @@ fn count_cells(colours: &[u16]) -> usize {
     (0..colours.len())
         .filter(|&place| colours.iter().any(|&c| usize::from(c) == place))
         .count()
-}
-
-/// The search tree, walked depth first; a node is the list of atoms singled out on the way to it.
-struct Search<'a, const A: usize, const B: usize> {
-    molecule: &'a Molecule<A, B>,
-    root: Vec<u16, A>,
-    path: Vec<u16, A>,
-    first: Vec<u16, A>,
-    best: Vec<u16, A>,
-    first_path: Vec<u16, A>,
-    best_path: Vec<u16, A>,
-    generators: Vec<Vec<u16, A>, MAX_GENERATORS>,
-    refinements: usize,
-}
-
-impl<'a, const A: usize, const B: usize> Search<'a, A, B> {
-    fn new(molecule: &'a Molecule<A, B>) -> Self {
-        let mut root = molecule.initial_colours(true);
-        molecule.refine(&mut root, true);
-        Self {
-            molecule,
-            root,
-            path: Vec::new(),
-            first: Vec::new(),
-            best: Vec::new(),
-            first_path: Vec::new(),
-            best_path: Vec::new(),
-            generators: Vec::new(),
-            refinements: 0,
-        }
-    }
-
-    fn run(mut self) -> CanonicalOrder<A> {
-        loop {
-            let colours = self.descend();
-            let keep = self.leaf(&colours);
-            self.path.truncate(keep);
-            if self.refinements > MAX_REFINEMENTS || !self.advance() {
-                break;
-            }
-        }
-        let exact = self.refinements <= MAX_REFINEMENTS;
-        let mut atoms: Vec<u16, A> = self.best.clone();
-        for (atom, &rank) in self.best.iter().enumerate() {
-            if let Some(slot) = atoms.get_mut(usize::from(rank)) {
-                *slot = atom as u16;
-            }
-        }
-        CanonicalOrder {
-            atoms,
-            ranks: self.best,
-            exact,
-        }
-    }
-
-    /// Follows the first branch at every level down to a leaf and gives its colours, which are ranks.
-    fn descend(&mut self) -> Vec<u16, A> {
-        let mut colours = self.colours_at(self.path.len());
-        while let Some(cell) = target_cell(&colours) {
-            let Some(atom) = colours.iter().position(|&c| c == cell) else {
-                break;
-            };
-            // A path is never longer than the number of atoms.
-            let _ = self.path.push(atom as u16);
-            self.single_out(&mut colours, atom);
-        }
-        colours
-    }
-
-    /// Moves to the next branch that no known automorphism maps to an earlier one, going up where there is none.
-    fn advance(&mut self) -> bool {
-        while let Some(last) = self.path.pop() {
-            let colours = self.colours_at(self.path.len());
-            let cell = colours.get(usize::from(last)).copied();
-            let orbits = self.orbits();
-            let next = (usize::from(last) + 1..colours.len()).find(|&atom| {
-                colours.get(atom).copied() == cell && orbits.get(atom).copied() == Some(atom as u16)
-            });
-            if let Some(atom) = next {
-                let _ = self.path.push(atom as u16);
-                return true;
-            }
-        }
-        false
-    }
-
-    /// Compares a leaf with the first and the best one; gives the length of the path from which the search goes on.
-    fn leaf(&mut self, ranks: &Vec<u16, A>) -> usize {
-        if self.best.is_empty() {
-            self.first = ranks.clone();
-            self.best = ranks.clone();
-            self.first_path = self.path.clone();
-            self.best_path = self.path.clone();
-            return self.path.len();
-        }
-        let to_best = self.compare(ranks, &self.best);
-        let twin = if to_best == Ordering::Equal {
-            Some((&self.best, &self.best_path))
-        } else if self.compare(ranks, &self.first) == Ordering::Equal {
-            Some((&self.first, &self.first_path))
-        } else {
-            None
-        };
-        if let Some((other, path)) = twin {
-            let common = path
-                .iter()
-                .zip(&self.path)
-                .take_while(|(a, b)| a == b)
-                .count();
-            let generator = automorphism(other, ranks);
-            let _ = self.generators.push(generator);
-            // The whole branch below the parting of the ways repeats an earlier one.
-            return (common + 1).min(self.path.len());
-        }
-        if to_best == Ordering::Less {
-            self.best = ranks.clone();
-            self.best_path = self.path.clone();
-        }
-        self.path.len()
-    }
-
-    fn compare(&self, ranks: &[u16], other: &[u16]) -> Ordering {
-        let (atoms, others) = (inverse::<A>(ranks), inverse::<A>(other));
-        for (&a, &b) in atoms.iter().zip(&others) {
-            let row = self.molecule.code_row(ranks, usize::from(a));
-            let order = row.cmp(&self.molecule.code_row(other, usize::from(b)));
-            if order != Ordering::Equal {
-                return order;
-            }
-        }
-        Ordering::Equal
-    }
-
-    fn colours_at(&mut self, depth: usize) -> Vec<u16, A> {
-        let mut colours = self.root.clone();
-        for level in 0..depth {
-            if let Some(&atom) = self.path.get(level) {
-                self.single_out(&mut colours, usize::from(atom));
-            }
-        }
-        colours
-    }
-
-    /// Puts an atom before the others of its colour and refines.
-    fn single_out(&mut self, colours: &mut Vec<u16, A>, atom: usize) {
-        let own = colours.get(atom).copied();
-        for (index, colour) in colours.iter_mut().enumerate() {
-            if Some(*colour) == own && index != atom {
-                *colour += 1;
-            }
-        }
-        self.molecule.refine(colours, true);
-        self.refinements += 1;
-    }
-
-    /// The lowest atom of each atom's orbit under the automorphisms that keep the path.
-    fn orbits(&self) -> Vec<u16, A> {
-        let mut lowest: Vec<u16, A> = (0..self.root.len() as u16).collect();
-        let keeps = |g: &&Vec<u16, A>| {
-            let fixed = |&atom: &u16| g.get(usize::from(atom)) == Some(&atom);
-            self.path.iter().all(fixed)
-        };
-        for generator in self.generators.iter().filter(keeps) {
-            for (atom, &image) in generator.iter().enumerate() {
-                let one = lowest.get(atom).copied().unwrap_or(0);
-                let two = lowest.get(usize::from(image)).copied().unwrap_or(0);
-                let (low, high) = (one.min(two), one.max(two));
-                if low != high {
-                    for slot in lowest.iter_mut().filter(|slot| **slot == high) {
-                        *slot = low;
-                    }
-                }
-            }
-        }
-        lowest
-    }
-}
-
-/// The colour of the first cell of more than one atom.
-fn target_cell(colours: &[u16]) -> Option<u16> {
-    let several = |&&colour: &&u16| colours.iter().filter(|&&c| c == colour).count() > 1;
-    colours.iter().filter(several).min().copied()
-}
-
-/// The atoms by rank.
-fn inverse<const A: usize>(ranks: &[u16]) -> Vec<u16, A> {
-    let mut atoms: Vec<u16, A> = ranks.iter().copied().collect();
-    for (atom, &rank) in ranks.iter().enumerate() {
-        if let Some(slot) = atoms.get_mut(usize::from(rank)) {
-            *slot = atom as u16;
-        }
-    }
-    atoms
-}
-
-/// The exchange of atoms that turns one labelling into another with the same code.
-fn automorphism<const A: usize>(from: &[u16], to: &[u16]) -> Vec<u16, A> {
-    let images = inverse::<A>(to);
-    from.iter()
-        .map(|&rank| images.get(usize::from(rank)).copied().unwrap_or(rank))
-        .collect()
 }

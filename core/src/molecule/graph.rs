@@ -18,7 +18,7 @@ pub enum BondOrder {
     Double,
     /// Three electron pairs.
     Triple,
-    /// Marked aromatic in the input; [`Molecule`] replaces it by a Kekulé order.
+    /// Marked aromatic in the input; [`Molecule`](super::Molecule) replaces it by a Kekulé order.
     Aromatic,
 }
 
@@ -62,7 +62,7 @@ pub struct DoubleBondStereo {
 pub struct Bond {
     /// The two atoms' indices, in the order of the input.
     pub atoms: [u16; 2],
-    /// The order; never [`BondOrder::Aromatic`] in a finished [`Molecule`].
+    /// The order; never [`BondOrder::Aromatic`] in a finished [`Molecule`](super::Molecule).
     pub order: BondOrder,
     /// Configuration of a double bond, if the input states one.
     pub stereo: Option<DoubleBondStereo>,

@@ -2,6 +2,7 @@
 
 mod aromaticity;
 mod canonical;
+mod canonical_search;
 mod centres;
 mod cycle_families;
 mod cycle_space;

@@ -1,11 +1,10 @@
 //! Stereo marks that say nothing: both configurations are the same molecule, or only one can exist.
 
-use core::cmp::Ordering;
-
 use heapless::Vec;
 
+use super::canonical::CanonicalOrder;
 use super::centres::CentreKind;
-use super::graph::{Ligand, TetrahedralStereo};
+use super::graph::{Ligand, Neighbour, TetrahedralStereo};
 use super::molecule::Molecule;
 
 impl<const A: usize, const B: usize> Molecule<A, B> {
@@ -22,23 +21,35 @@ impl<const A: usize, const B: usize> Molecule<A, B> {
         }
         self.drop_settled_centres();
         // Marks that fall away together may leave others idle.
-        loop {
-            let centres: Vec<bool, A> = (0..self.tetrahedral().len())
-                .map(|mark| self.idle_centre(mark))
-                .collect();
-            let bonds: Vec<bool, B> = (0..self.bonds().len())
-                .map(|bond| self.idle_bond(bond))
-                .collect();
-            if !centres.iter().chain(&bonds).any(|&idle| idle) {
-                return;
-            }
-            let mut marks = centres.iter();
-            self.tetrahedral_mut()
-                .retain(|_| marks.next() != Some(&true));
-            for (bond, _) in bonds.iter().enumerate().filter(|(_, idle)| **idle) {
-                self.set_bond_stereo(bond, None);
-            }
+        while self.drop_idle_once() {}
+    }
+
+    /// Drops the marks that are idle now; whether there were any.
+    fn drop_idle_once(&mut self) -> bool {
+        let classes = self.symmetry_classes();
+        let doubtful = |mark: &TetrahedralStereo| has_ligands_alike(mark, &classes);
+        let in_doubt = self.tetrahedral().iter().any(doubtful)
+            || (0..self.bonds().len()).any(|bond| self.has_ends_alike(bond, &classes));
+        if !in_doubt {
+            return false;
         }
+        let own = self.canonical_order();
+        let centres: Vec<bool, A> = self
+            .tetrahedral()
+            .iter()
+            .enumerate()
+            .map(|(mark, stereo)| doubtful(stereo) && self.idle_centre(mark, &own))
+            .collect();
+        let bonds: Vec<bool, B> = (0..self.bonds().len())
+            .map(|bond| self.has_ends_alike(bond, &classes) && self.idle_bond(bond, &own))
+            .collect();
+        let mut marks = centres.iter();
+        self.tetrahedral_mut()
+            .retain(|_| marks.next() != Some(&true));
+        for (bond, _) in bonds.iter().enumerate().filter(|(_, idle)| **idle) {
+            self.set_bond_stereo(bond, None);
+        }
+        centres.iter().chain(&bonds).any(|&idle| idle)
     }
 
     /// Drops marks that the rings settle: of bridgeheads, unless a free centre of the same ring system is told relative to them.
@@ -63,37 +74,62 @@ impl<const A: usize, const B: usize> Molecule<A, B> {
             .retain(|_| keep.next() == Some(&true));
     }
 
-    fn idle_centre(&self, mark: usize) -> bool {
-        let implicit = |mark: &TetrahedralStereo| {
-            mark.ligands
-                .iter()
-                .filter(|ligand| **ligand == Ligand::Implicit)
-                .count()
+    /// Whether a bond is marked and two neighbours at one end share a symmetry class; where none do, the mark tells.
+    fn has_ends_alike(&self, bond: usize, classes: &[u16]) -> bool {
+        let Some(bond) = self.bonds().get(bond).filter(|b| b.stereo.is_some()) else {
+            return false;
         };
-        if self.tetrahedral().get(mark).map(implicit) > Some(1) {
-            return true;
-        }
-        let mut inverted = self.clone();
-        let flip = |mark: &mut TetrahedralStereo| mark.clockwise = !mark.clockwise;
-        inverted.tetrahedral_mut().get_mut(mark).map(flip).is_some() && self.same_as(&inverted)
+        let class = |n: &Neighbour| classes.get(usize::from(n.atom));
+        bond.atoms.iter().any(|&end| {
+            let others = || {
+                let around = self.neighbours(usize::from(end)).iter();
+                around.filter(|n| !bond.atoms.contains(&n.atom))
+            };
+            let mut firsts = others().enumerate();
+            firsts.any(|(i, a)| others().skip(i + 1).any(|b| class(a) == class(b)))
+        })
     }
 
-    fn idle_bond(&self, bond: usize) -> bool {
+    fn idle_centre(&self, mark: usize, own: &CanonicalOrder<A>) -> bool {
+        let mut inverted = self.clone();
+        let flip = |mark: &mut TetrahedralStereo| mark.clockwise = !mark.clockwise;
+        inverted.tetrahedral_mut().get_mut(mark).map(flip).is_some() && self.is_same(own, &inverted)
+    }
+
+    fn idle_bond(&self, bond: usize, own: &CanonicalOrder<A>) -> bool {
         let Some(mut stereo) = self.bonds().get(bond).and_then(|b| b.stereo) else {
             return false;
         };
         stereo.same_side = !stereo.same_side;
         let mut inverted = self.clone();
         inverted.set_bond_stereo(bond, Some(stereo));
-        self.same_as(&inverted)
+        self.is_same(own, &inverted)
     }
 
     /// Whether two molecules that differ in stereo marks alone are the same.
-    fn same_as(&self, other: &Self) -> bool {
-        let (ours, theirs) = (self.canonical_order(), other.canonical_order());
-        ours.atoms.iter().zip(&theirs.atoms).all(|(&a, &b)| {
-            let row = self.code_row(&ours.ranks, usize::from(a));
-            row.cmp(&other.code_row(&theirs.ranks, usize::from(b))) == Ordering::Equal
+    fn is_same(&self, own: &CanonicalOrder<A>, other: &Self) -> bool {
+        let theirs = other.canonical_order();
+        own.atoms.iter().zip(&theirs.atoms).all(|(&a, &b)| {
+            self.code_row(&own.ranks, usize::from(a))
+                == other.code_row(&theirs.ranks, usize::from(b))
         })
     }
+}
+
+/// Whether two ligands share a symmetry class.
+///
+/// Where all differ the mark tells: told by the classes it is the same for every atom that a symmetry brings there, and inverting one
+/// changes how many of them are of each kind.
+fn has_ligands_alike(mark: &TetrahedralStereo, classes: &[u16]) -> bool {
+    let class = |ligand: &Ligand| match *ligand {
+        Ligand::Atom(atom) => classes.get(usize::from(atom)),
+        Ligand::Implicit => None,
+    };
+    let mut ligands = mark.ligands.iter().enumerate();
+    ligands.any(|(i, a)| {
+        mark.ligands
+            .iter()
+            .skip(i + 1)
+            .any(|b| class(a) == class(b))
+    })
 }

@@ -5,7 +5,7 @@ use std::path::{Path, PathBuf};
 use std::process::ExitCode;
 
 use clap::{Parser, Subcommand};
-use tautring_core::additivity::{Level, Prior};
+use tautring_core::additivity::{CONTRIBUTIONS, Level, Prior};
 use tautring_report::fit::{
     Dataset, Hyperparameters, LevelMatrices, Posterior, Tables, leave_out, search,
 };
@@ -66,7 +66,7 @@ fn run(arguments: &Arguments) -> Result<ExitCode, Box<dyn Error>> {
             let start = Prior {
                 tau_kj_per_mol: [3.0; Level::ALL.len()],
                 ring_width: 0.25,
-                deviation_kj_per_mol: 3.0,
+                deviation_kj_per_mol: [1.0; CONTRIBUTIONS],
                 degrees_of_freedom: 4.0,
             };
             let matrices = LevelMatrices::new(&data, start.ring_width);

@@ -1,7 +1,10 @@
 //! Hyperparameters by marginal likelihood, with heavy-tailed errors as scale mixtures.
 
+use std::collections::BTreeMap;
+
 use serde::{Deserialize, Serialize};
-use tautring_core::additivity::{AdditivityError, Level, Prior, cholesky};
+use tautring_core::additivity::{AdditivityError, CONTRIBUTIONS, Level, Prior, cholesky};
+use tautring_core::molecule::Element;
 
 use super::Dataset;
 use super::matrices::{LevelMatrices, invert, quadratic_form, trace_of_product};
@@ -9,14 +12,14 @@ use super::matrices::{LevelMatrices, invert, quadratic_form, trace_of_product};
 /// What the search finds and the tables are made from.
 #[derive(Clone, Debug, Serialize, Deserialize)]
 pub struct Hyperparameters {
-    /// Prior standard deviation of each level by its name, kJ/mol.
-    pub tau_kj_per_mol: std::collections::BTreeMap<String, f64>,
+    /// Scale of the deviation of a molecule from additivity for one heavy atom of each element and one ring, kJ/mol.
+    pub deviation_kj_per_mol: BTreeMap<String, f64>,
     /// Width of the correlation between ring sizes, in the natural logarithm of the size.
     pub ring_width: f64,
-    /// Scale of the deviation of a molecule from additivity, kJ/mol.
-    pub deviation_kj_per_mol: f64,
     /// Degrees of freedom of deviations and errors.
     pub degrees_of_freedom: f64,
+    /// Prior standard deviation of each level by its name, kJ/mol.
+    pub tau_kj_per_mol: BTreeMap<String, f64>,
 }
 
 impl Hyperparameters {
@@ -30,10 +33,14 @@ impl Hyperparameters {
                 .copied()
                 .unwrap_or(0.0);
         }
+        let mut deviation = [0.0; CONTRIBUTIONS];
+        for (slot, name) in deviation.iter_mut().zip(contribution_names()) {
+            *slot = self.deviation_kj_per_mol.get(name).copied().unwrap_or(0.0);
+        }
         Prior {
             tau_kj_per_mol: tau,
             ring_width: self.ring_width,
-            deviation_kj_per_mol: self.deviation_kj_per_mol,
+            deviation_kj_per_mol: deviation,
             degrees_of_freedom: self.degrees_of_freedom,
         }
     }
@@ -45,10 +52,21 @@ impl Hyperparameters {
                 .map(|&l| (l.name().to_owned(), three_digits(prior.tau(l))))
                 .collect(),
             ring_width: prior.ring_width,
-            deviation_kj_per_mol: three_digits(prior.deviation_kj_per_mol),
+            deviation_kj_per_mol: contribution_names()
+                .zip(prior.deviation_kj_per_mol)
+                .map(|(name, scale)| (name.to_owned(), three_digits(scale)))
+                .collect(),
             degrees_of_freedom: prior.degrees_of_freedom,
         }
     }
+}
+
+/// Names of the contributions to the deviation from additivity: elements, then rings.
+fn contribution_names() -> impl Iterator<Item = &'static str> {
+    Element::ALL
+        .into_iter()
+        .map(Element::symbol)
+        .chain(["ring"])
 }
 
 /// Rounds to three significant digits, which is more than the likelihood resolves.
@@ -91,11 +109,11 @@ impl Posterior {
                 }
             }
         }
-        let scale = prior.deviation_kj_per_mol;
         let deviation_variance: Vec<f64> = weights
             .molecules
             .iter()
-            .map(|w| scale * scale / w)
+            .zip(&data.molecules)
+            .map(|(w, rows)| squared_scale(data, rows, &prior) / w)
             .collect();
         let error_variance: Vec<f64> = data
             .rows
@@ -154,7 +172,7 @@ impl Posterior {
     /// Expected precision weights of errors and deviations under Student's distribution.
     fn weights(&self, data: &Dataset) -> Weights {
         let nu = self.prior.degrees_of_freedom;
-        let weight = |square: f64, scale: f64| (nu + 1.0) / (nu + square / (scale * scale));
+        let weight = |square: f64, squared_scale: f64| (nu + 1.0) / (nu + square / squared_scale);
         let rows = data
             .rows
             .iter()
@@ -163,7 +181,7 @@ impl Posterior {
                 let d = self.error_variance[i];
                 let mean = d * self.alpha[i];
                 let variance = d - d * d * self.inverse[entry(i, i)];
-                weight(mean * mean + variance, row.u_kj_per_mol)
+                weight(mean * mean + variance, row.u_kj_per_mol.powi(2))
             })
             .collect();
         let molecules = data
@@ -177,10 +195,8 @@ impl Posterior {
                     .flat_map(|&i| members.iter().map(move |&j| entry(i, j)))
                     .map(|at| self.inverse[at])
                     .sum();
-                weight(
-                    mean * mean + t - t * t * precision,
-                    self.prior.deviation_kj_per_mol,
-                )
+                let squared_scale = squared_scale(data, members, &self.prior);
+                weight(mean * mean + t - t * t * precision, squared_scale)
             })
             .collect();
         Weights { rows, molecules }
@@ -189,6 +205,14 @@ impl Posterior {
 
 /// Rounds after which the weights of the heavy tails have settled.
 const WEIGHT_ROUNDS: usize = 12;
+
+/// Squared scale of the deviation of a molecule, kJ²/mol².
+fn squared_scale(data: &Dataset, members: &[usize], prior: &Prior) -> f64 {
+    let first = members
+        .first()
+        .map(|&row| data.rows[row].features.deviation());
+    first.map_or(0.0, |deviation| prior.squared_scale(deviation))
+}
 
 struct Weights {
     rows: Vec<f64>,
@@ -237,18 +261,31 @@ pub fn search(
                 *tau *= ratio.sqrt();
             }
         }
-        let (mut quadratic, mut trace) = (0.0, 0.0);
+        let mut quadratic = [0.0; CONTRIBUTIONS];
+        let mut trace = [0.0; CONTRIBUTIONS];
         for (members, w) in data.molecules.iter().zip(&weights.molecules) {
             let sum: f64 = members.iter().map(|&i| posterior.alpha[i]).sum();
-            quadratic += sum * sum / w;
-            trace += members
+            let precision: f64 = members
                 .iter()
                 .flat_map(|&i| members.iter().map(move |&j| entry(i, j)))
                 .map(|at| posterior.inverse[at])
-                .sum::<f64>()
-                / w;
+                .sum();
+            let counts = data.rows[members[0]].features.deviation().counts();
+            for ((q, t), count) in quadratic.iter_mut().zip(&mut trace).zip(counts) {
+                *q += count * sum * sum / w;
+                *t += count * precision / w;
+            }
         }
-        prior.deviation_kj_per_mol *= (quadratic / trace).sqrt();
+        for ((scale, q), t) in prior
+            .deviation_kj_per_mol
+            .iter_mut()
+            .zip(quadratic)
+            .zip(trace)
+        {
+            if t > 0.0 {
+                *scale *= (q / t).sqrt();
+            }
+        }
         weights = posterior.weights(data);
     }
     Ok(Hyperparameters::from_prior(&prior))

@@ -1,6 +1,6 @@
 //! Covariance matrices of the measurements, one for each level, packed by rows of the lower triangle.
 
-use tautring_core::additivity::{Level, Prior, cholesky};
+use tautring_core::additivity::{CONTRIBUTIONS, Level, Prior, cholesky};
 
 use super::Dataset;
 
@@ -21,7 +21,7 @@ impl LevelMatrices {
                 let prior = Prior {
                     tau_kj_per_mol: tau,
                     ring_width,
-                    deviation_kj_per_mol: 0.0,
+                    deviation_kj_per_mol: [0.0; CONTRIBUTIONS],
                     degrees_of_freedom: f64::INFINITY,
                 };
                 let counted: Vec<_> = data

@@ -11,5 +11,5 @@ pub use inference::{Hyperparameters, Posterior, search};
 pub use matrices::LevelMatrices;
 pub use tables::{TableError, Tables};
 pub use validation::{
-    COVERAGE_FACTOR, LeftOut, Summary, describe, leave_out, left_out_csv, summarise,
+    LeftOut, Summary, describe, leave_out, left_out_csv, summarise,
 };

@@ -2,7 +2,7 @@
 
 use std::fmt::Write as _;
 
-use tautring_core::additivity::{Level, cholesky};
+use tautring_core::additivity::{Estimate, Level, cholesky};
 use tautring_core::molecule::Element;
 
 use super::dataset::{Dataset, Row};
@@ -15,10 +15,24 @@ pub struct LeftOut {
     pub row: usize,
     /// Measured minus predicted, kJ/mol.
     pub error_kj_per_mol: f64,
-    /// Standard uncertainty of the prediction for the true value, kJ/mol.
-    pub u_kj_per_mol: f64,
-    /// Standard uncertainty of the prediction for a new measurement of the same quality, kJ/mol.
-    pub u_new_measurement_kj_per_mol: f64,
+    /// The prediction, for the true value.
+    pub estimate: Estimate,
+    /// The prediction, for a new measurement of the same quality.
+    pub new_measurement: Estimate,
+}
+
+impl LeftOut {
+    /// Logarithm of the predictive density of the measured value.
+    fn score(&self) -> f64 {
+        let nu = self.new_measurement.degrees_of_freedom();
+        let scale = self.new_measurement.u_kj_per_mol();
+        let z = self.error_kj_per_mol / scale;
+        libm::lgamma(f64::midpoint(nu, 1.0))
+            - libm::lgamma(nu / 2.0)
+            - 0.5 * (nu * std::f64::consts::PI).ln()
+            - f64::midpoint(nu, 1.0) * (z * z / nu).ln_1p()
+            - scale.ln()
+    }
 }
 
 /// Predicts each measurement without all measurements of its constitution.
@@ -26,8 +40,7 @@ pub struct LeftOut {
 /// With S the left-out rows, measured minus predicted is (K⁻¹_SS)⁻¹ α_S and its covariance (K⁻¹_SS)⁻¹. The weights of the heavy
 /// tails and the prior are those of all measurements.
 pub fn leave_out(data: &Dataset, posterior: &Posterior) -> Vec<LeftOut> {
-    let nu = posterior.prior.degrees_of_freedom;
-    let widening = nu / (nu - 2.0);
+    let prior = &posterior.prior;
     let mut result: Vec<LeftOut> = data
         .constitutions
         .iter()
@@ -58,13 +71,18 @@ pub fn leave_out(data: &Dataset, posterior: &Posterior) -> Vec<LeftOut> {
                     let model = total
                         - posterior.error_variance[row]
                         - posterior.deviation_variance[molecule];
-                    let truth = model.max(0.0) + posterior.prior.deviation_variance();
-                    let error = data.rows[row].u_kj_per_mol.powi(2) * widening;
+                    let measurement = &data.rows[row];
+                    let estimate = Estimate {
+                        value_kj_per_mol: measurement.value_kj_per_mol - errors[at],
+                        model_variance: model.max(0.0),
+                        tail_variance: prior.squared_scale(measurement.features.deviation()),
+                        tail_degrees_of_freedom: prior.degrees_of_freedom,
+                    };
                     LeftOut {
                         row,
                         error_kj_per_mol: errors[at],
-                        u_kj_per_mol: truth.sqrt(),
-                        u_new_measurement_kj_per_mol: (truth + error).sqrt(),
+                        estimate,
+                        new_measurement: estimate.of_measurement(measurement.u_kj_per_mol),
                     }
                 })
                 .collect::<Vec<_>>()
@@ -87,18 +105,19 @@ pub struct Summary {
     pub root_mean_square_kj_per_mol: f64,
     /// Share of the measurements inside their 95 % interval.
     pub coverage: f64,
+    /// Mean logarithm of the predictive density, the larger the better.
+    pub score: f64,
 }
-
-/// Factor from the standard uncertainty to the 95 % interval.
-pub const COVERAGE_FACTOR: f64 = 1.96;
 
 /// Summarises a set of left-out measurements; `None` for an empty one.
 pub fn summarise<'a>(errors: impl IntoIterator<Item = &'a LeftOut>) -> Option<Summary> {
     let mut sizes = Vec::new();
     let mut inside = 0_usize;
+    let mut score = 0.0;
     for e in errors {
+        score += e.score();
         let size = e.error_kj_per_mol.abs();
-        inside += usize::from(size <= COVERAGE_FACTOR * e.u_new_measurement_kj_per_mol);
+        inside += usize::from(size <= e.new_measurement.expanded_kj_per_mol());
         sizes.push(size);
     }
     if sizes.is_empty() {
@@ -113,6 +132,7 @@ pub fn summarise<'a>(errors: impl IntoIterator<Item = &'a LeftOut>) -> Option<Su
         mean_kj_per_mol: sizes.iter().sum::<f64>() / n,
         root_mean_square_kj_per_mol: (sizes.iter().map(|s| s * s).sum::<f64>() / n).sqrt(),
         coverage: inside as f64 / n,
+        score: score / n,
     })
 }
 
@@ -182,19 +202,20 @@ pub fn describe(data: &Dataset, errors: &[LeftOut]) -> String {
     for supported in [false, true] {
         for (name, belongs) in FAMILIES {
             let chosen = errors.iter().filter(|e| {
-                belongs(&data.rows[e.row]) && (!supported || e.u_kj_per_mol <= SUPPORTED_KJ_PER_MOL)
+                belongs(&data.rows[e.row]) && (!supported || e.estimate.u_kj_per_mol() <= SUPPORTED_KJ_PER_MOL)
             });
             if let Some(s) = summarise(chosen) {
                 let mark = if supported { ", u at most 8" } else { "" };
                 let _ = writeln!(
                     text,
-                    "{:34}{:>6}{:>8.2}{:>8.2}{:>8.2}{:>9.1}%",
+                    "{:34}{:>6}{:>8.2}{:>8.2}{:>8.2}{:>9.1}%{:>8.3}",
                     format!("{name}{mark}"),
                     s.count,
                     s.median_kj_per_mol,
                     s.mean_kj_per_mol,
                     s.root_mean_square_kj_per_mol,
-                    100.0 * s.coverage
+                    100.0 * s.coverage,
+                    s.score
                 );
             }
         }
@@ -205,7 +226,7 @@ pub fn describe(data: &Dataset, errors: &[LeftOut]) -> String {
 /// The left-out errors as a table: one line for each measurement.
 pub fn left_out_csv(data: &Dataset, errors: &[LeftOut]) -> String {
     let mut text = String::from(
-        "name,smiles,source,measured_kj_per_mol,predicted_kj_per_mol,error_kj_per_mol,u_kj_per_mol,u_new_measurement_kj_per_mol\n",
+        "name,smiles,source,measured_kj_per_mol,predicted_kj_per_mol,error_kj_per_mol,u_kj_per_mol,expanded_new_measurement_kj_per_mol\n",
     );
     for e in errors {
         let m = &data.rows[e.row].measurement;
@@ -218,8 +239,8 @@ pub fn left_out_csv(data: &Dataset, errors: &[LeftOut]) -> String {
             m.value_kj_per_mol,
             m.value_kj_per_mol - e.error_kj_per_mol,
             e.error_kj_per_mol,
-            e.u_kj_per_mol,
-            e.u_new_measurement_kj_per_mol
+            e.estimate.u_kj_per_mol(),
+            e.new_measurement.expanded_kj_per_mol()
         );
     }
     text

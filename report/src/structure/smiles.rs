@@ -123,7 +123,8 @@ fn double_bond(smiles: &Smiles, first: usize, second: usize) -> Option<DoubleBon
 /// The mark of a tetrahedral centre with its ligands in the order in which the SMILES names them.
 ///
 /// A mark on anything but four ligands says nothing and is passed over. The lone pair of sulfur and phosphorus counts as a ligand, that
-/// of nitrogen does not: amines invert at room temperature.
+/// of nitrogen does not: amines invert at room temperature. The language leaves open where the lone pair of an atom at the
+/// beginning stands; as in `RDKit` it comes last.
 fn tetrahedral(
     smiles: &Smiles,
     outline: &Outline,
@@ -145,14 +146,16 @@ fn tetrahedral(
     chain.sort_unstable();
     let before = chain.iter().filter(|&&other| other < centre).count();
     ligands.extend(chain.drain(..before).map(ligand));
-    if atom.hydrogen_count() == 1 {
-        ligands.push(Ligand::Implicit);
-    }
-    let lone_pair = matches!(atom.symbol().to_string().as_str(), "S" | "P");
-    if lone_pair && ligands.len() + ring.len() + chain.len() == 3 {
+    let first = ligands.is_empty();
+    let lone_pair = matches!(atom.symbol().to_string().as_str(), "S" | "P")
+        && ligands.len() + ring.len() + chain.len() == 3;
+    if atom.hydrogen_count() == 1 || (lone_pair && !first) {
         ligands.push(Ligand::Implicit);
     }
     ligands.extend(ring.into_iter().chain(chain).map(ligand));
+    if lone_pair && first {
+        ligands.push(Ligand::Implicit);
+    }
     Some(TetrahedralStereo {
         centre: centre as u16,
         ligands: ligands.try_into().ok()?,

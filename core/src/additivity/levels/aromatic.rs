@@ -7,7 +7,7 @@ use crate::additivity::features::Features;
 use crate::additivity::key::Key;
 use crate::additivity::skeleton::{Skeleton, is_aromatic_ring};
 
-/// Counts substituent pairs on aromatic rings, aromatic atoms by their rings, and aromatic rings by composition.
+/// Counts aromatic rings by size, the substituent pairs on them, and how often aromatic atoms fuse rings.
 pub(super) fn count<const A: usize, const B: usize, const F: usize>(
     skeleton: &Skeleton<A, B>,
     features: &mut Features<F>,
@@ -17,6 +17,7 @@ pub(super) fn count<const A: usize, const B: usize, const F: usize>(
             continue;
         }
         let size = ring.len();
+        features.add(Key::new(Level::AromaticRing, &[size as u64, 0]), 1.0)?;
         for (i, &first) in ring.iter().enumerate() {
             for (j, &second) in ring.iter().enumerate().skip(i + 1) {
                 let apart = (j - i).min(size - (j - i)) as u64;
@@ -31,9 +32,12 @@ pub(super) fn count<const A: usize, const B: usize, const F: usize>(
             }
         }
     }
-    for (_, site) in skeleton.sites().filter(|(_, s)| s.aromatic_rings > 0) {
-        let tokens = [site.kind.token(), u64::from(site.aromatic_rings)];
-        features.add(Key::new(Level::AromaticRing, &tokens), 1.0)?;
+    for (_, site) in skeleton.sites() {
+        let fusions = site.aromatic_rings.saturating_sub(1);
+        if fusions > 0 {
+            let key = Key::new(Level::AromaticRing, &[site.kind.class_token()]);
+            features.add(key, f64::from(fusions))?;
+        }
     }
     Ok(())
 }

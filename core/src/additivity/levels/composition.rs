@@ -26,9 +26,13 @@ pub(super) fn count<const A: usize, const B: usize, const F: usize>(
         }
     }
     for (bond, _, [a, b]) in skeleton.bonds() {
+        let order = skeleton.order_token(bond);
         let [low, high] = sorted(a.kind.token(), b.kind.token());
-        let key = Key::new(Level::Bond, &[low, high, skeleton.order_token(bond)]);
-        features.add(key, 1.0)?;
+        features.add(Key::new(Level::Bond, &[low, high, order]), 1.0)?;
+        let [low, high] = sorted(a.kind.element_token(), b.kind.element_token());
+        features.add(Key::new(Level::BondOrder, &[low, high, order]), 1.0)?;
+        let [low, high] = sorted(a.kind.class_token(), b.kind.class_token());
+        features.add(Key::new(Level::BondElements, &[low, high, order]), 1.0)?;
     }
     Ok(())
 }

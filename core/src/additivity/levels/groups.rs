@@ -10,7 +10,7 @@ use crate::additivity::Level;
 use crate::additivity::error::AdditivityError;
 use crate::additivity::features::Features;
 use crate::additivity::key::{Key, mix};
-use crate::additivity::skeleton::{Site, Skeleton};
+use crate::additivity::skeleton::{AtomType, Site, Skeleton};
 use crate::molecule::MAX_DEGREE;
 
 /// Counts groups, group pairs and shells.
@@ -22,12 +22,14 @@ pub(super) fn count<const A: usize, const B: usize, const F: usize>(
         .map(|atom| {
             skeleton
                 .site(atom)
-                .map_or(0, |site| group(skeleton, atom, site))
+                .map_or(0, |site| group(skeleton, atom, site, AtomType::token))
         })
         .collect();
     let group_of = |atom: usize| groups.get(atom).copied().unwrap_or(0);
-    for (atom, _) in skeleton.sites() {
+    for (atom, site) in skeleton.sites() {
         features.add(Key::new(Level::Group, &[group_of(atom)]), 1.0)?;
+        let coarse = group(skeleton, atom, site, AtomType::class_token);
+        features.add(Key::new(Level::GroupElements, &[coarse]), 1.0)?;
         let shell = around(group_of(atom), skeleton, atom, |n, bond| {
             mix(&[group_of(n), skeleton.order_token(bond)])
         });
@@ -41,15 +43,16 @@ pub(super) fn count<const A: usize, const B: usize, const F: usize>(
     Ok(())
 }
 
-/// A central atom with its hydrogens and the types of its heavy neighbours.
+/// A central atom with its hydrogens and what `token` says of its heavy neighbours.
 fn group<const A: usize, const B: usize>(
     skeleton: &Skeleton<A, B>,
     atom: usize,
     site: Site,
+    token: impl Fn(AtomType) -> u64,
 ) -> u64 {
-    let centre = mix(&[site.kind.token(), u64::from(site.hydrogens)]);
+    let centre = mix(&[token(site.kind), u64::from(site.hydrogens)]);
     around(centre, skeleton, atom, |n, bond| {
-        let kind = skeleton.site(n).map_or(0, |s| s.kind.token());
+        let kind = skeleton.site(n).map_or(0, |s| token(s.kind));
         kind << 3 | skeleton.order_token(bond)
     })
 }

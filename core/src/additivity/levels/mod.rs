@@ -8,9 +8,10 @@ mod groups;
 mod paths;
 mod rings;
 
+use super::deviation;
 use super::error::AdditivityError;
 use super::features::Features;
-use super::skeleton::Skeleton;
+use super::skeleton::{Skeleton, is_aromatic_ring};
 use crate::molecule::{Element, Molecule};
 
 /// Counts the features of one neutral organic molecule on every level.
@@ -27,7 +28,7 @@ pub fn count<const A: usize, const B: usize, const F: usize>(
     }
     let skeleton = Skeleton::new(molecule);
     let mut features = Features::new();
-    features.add_molecule();
+    note_deviation(&skeleton, &mut features);
     composition::count(&skeleton, &mut features)?;
     groups::count(&skeleton, &mut features)?;
     paths::geminal(&skeleton, &mut features)?;
@@ -50,10 +51,26 @@ pub fn count_strain<const A: usize, const B: usize, const F: usize>(
     keep: &dyn Fn(usize) -> bool,
 ) -> Result<Features<F>, AdditivityError> {
     molecule.require_single_neutral()?;
+    let skeleton = Skeleton::new(molecule);
     let mut features = Features::new();
-    features.add_molecule();
-    strain_levels(&Skeleton::new(molecule), &mut features, keep)?;
+    note_deviation(&skeleton, &mut features);
+    strain_levels(&skeleton, &mut features, keep)?;
     Ok(features)
+}
+
+fn note_deviation<const A: usize, const B: usize, const F: usize>(
+    skeleton: &Skeleton<A, B>,
+    features: &mut Features<F>,
+) {
+    for (_, site) in skeleton.sites() {
+        features.add_deviation(site.kind.element_token() as usize);
+    }
+    let molecule = skeleton.molecule;
+    for ring in molecule.rings().iter() {
+        if !is_aromatic_ring(molecule, ring) {
+            features.add_deviation(deviation::RINGS);
+        }
+    }
 }
 
 fn strain_levels<const A: usize, const B: usize, const F: usize>(

@@ -5,7 +5,7 @@ use crate::additivity::Level;
 use crate::additivity::error::AdditivityError;
 use crate::additivity::features::Features;
 use crate::additivity::key::Key;
-use crate::additivity::skeleton::{Site, Skeleton};
+use crate::additivity::skeleton::{AtomType, Site, Skeleton};
 
 /// Counts pairs of atoms two bonds apart.
 pub(super) fn geminal<const A: usize, const B: usize, const F: usize>(
@@ -19,6 +19,9 @@ pub(super) fn geminal<const A: usize, const B: usize, const F: usize>(
                     let [low, high] = sorted(first.kind.token(), second.kind.token());
                     let key = Key::new(Level::Geminal, &[low, site.kind.token(), high]);
                     features.add(key, 1.0)?;
+                    let [low, high] = sorted(first.kind.class_token(), second.kind.class_token());
+                    let tokens = [low, site.kind.class_token(), high];
+                    features.add(Key::new(Level::GeminalElements, &tokens), 1.0)?;
                 }
             }
         }
@@ -31,65 +34,73 @@ pub(super) fn vicinal<const A: usize, const B: usize, const F: usize>(
     skeleton: &Skeleton<A, B>,
     features: &mut Features<F>,
 ) -> Result<(), AdditivityError> {
-    across(skeleton, features, Level::Vicinal, |bond, _| {
-        !skeleton.is_ring_bond(bond)
-    })
-}
-
-/// Counts pairs of atoms three bonds apart across bonds of non-aromatic rings.
-pub(super) fn ring_vicinal<const A: usize, const B: usize, const F: usize>(
-    skeleton: &Skeleton<A, B>,
-    features: &mut Features<F>,
-    keep: &dyn Fn(usize) -> bool,
-) -> Result<(), AdditivityError> {
-    across(skeleton, features, Level::RingVicinal, |bond, atom| {
-        skeleton.bond_rings(bond) != 0 && keep(atom)
-    })
-}
-
-/// Counts vicinal pairs across the bonds that `chosen` accepts (bond and its first atom).
-fn across<const A: usize, const B: usize, const F: usize>(
-    skeleton: &Skeleton<A, B>,
-    features: &mut Features<F>,
-    level: Level,
-    chosen: impl Fn(usize, usize) -> bool,
-) -> Result<(), AdditivityError> {
-    for (bond, [a, b], [site_a, site_b]) in skeleton.bonds() {
-        if !chosen(bond, a) {
+    for (bond, ends, _) in skeleton.bonds() {
+        if skeleton.is_ring_bond(bond) {
             continue;
         }
-        for (n, first) in skeleton
-            .heavy_neighbours(a)
-            .filter(|(n, _)| usize::from(n.atom) != b)
-        {
-            for (m, second) in skeleton
-                .heavy_neighbours(b)
-                .filter(|(m, _)| usize::from(m.atom) != a)
-            {
-                if n.atom == m.atom {
-                    continue;
-                }
-                let [in_first, in_second] =
-                    [n, m].map(|x| skeleton.bond_rings(usize::from(x.bond)) != 0);
-                let forward = end(first, site_a, in_first);
-                let backward = end(second, site_b, in_second);
-                let [low, high] = if forward <= backward {
-                    [forward, backward]
-                } else {
-                    [backward, forward]
-                };
-                let tokens = [low[0], low[1], high[1], high[0], skeleton.order_token(bond)];
-                features.add(Key::new(level, &tokens), 1.0)?;
-            }
+        for path in paths(skeleton, ends, |_| true) {
+            let order = skeleton.order_token(bond);
+            features.add(key(Level::Vicinal, path, order, AtomType::token), 1.0)?;
+            features.add(
+                key(Level::VicinalElements, path, order, AtomType::class_token),
+                1.0,
+            )?;
         }
     }
     Ok(())
 }
 
-/// One half of a vicinal path: the outer atom, with a mark when its bond is in a ring, and the inner one.
-fn end(outer: Site, inner: Site, inside: bool) -> [u64; 2] {
-    [
-        outer.kind.token() << 1 | u64::from(inside),
-        inner.kind.token(),
-    ]
+/// Counts pairs of substituents on adjacent atoms of non-aromatic rings, on the atoms that `keep` accepts.
+pub(super) fn ring_vicinal<const A: usize, const B: usize, const F: usize>(
+    skeleton: &Skeleton<A, B>,
+    features: &mut Features<F>,
+    keep: &dyn Fn(usize) -> bool,
+) -> Result<(), AdditivityError> {
+    for (bond, ends, _) in skeleton.bonds() {
+        if skeleton.bond_rings(bond) == 0 || !keep(ends[0]) {
+            continue;
+        }
+        let outside = |bond: usize| skeleton.bond_rings(bond) == 0;
+        for path in paths(skeleton, ends, outside) {
+            let order = skeleton.order_token(bond);
+            features.add(
+                key(Level::RingVicinal, path, order, AtomType::class_token),
+                1.0,
+            )?;
+        }
+    }
+    Ok(())
+}
+
+/// The sites along the paths of three bonds across a bond, over outer bonds that `through` accepts.
+fn paths<const A: usize, const B: usize>(
+    skeleton: &Skeleton<A, B>,
+    [a, b]: [usize; 2],
+    through: impl Fn(usize) -> bool + Copy,
+) -> impl Iterator<Item = [Site; 4]> {
+    let outer = move |from: usize, not: usize| {
+        skeleton
+            .heavy_neighbours(from)
+            .filter(move |(n, _)| usize::from(n.atom) != not && through(usize::from(n.bond)))
+    };
+    let inner = [skeleton.site(a), skeleton.site(b)];
+    outer(a, b).flat_map(move |(n, first)| {
+        outer(b, a).filter_map(move |(m, last)| {
+            let [Some(second), Some(third)] = inner else {
+                return None;
+            };
+            (n.atom != m.atom).then_some([first, second, third, last])
+        })
+    })
+}
+
+/// The key of a path, the same from both ends.
+fn key(level: Level, path: [Site; 4], order: u64, token: impl Fn(AtomType) -> u64) -> Key {
+    let [a, b, c, d] = path.map(|site| token(site.kind));
+    let tokens = if [a, b] <= [d, c] {
+        [a, b, c, d, order]
+    } else {
+        [d, c, b, a, order]
+    };
+    Key::new(level, &tokens)
 }

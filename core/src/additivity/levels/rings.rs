@@ -37,6 +37,8 @@ pub(super) fn count<const A: usize, const B: usize, const F: usize>(
             let [low, high] = sorted(a.kind.token(), b.kind.token());
             let tokens = [low, high, skeleton.order_token(bond), rings];
             features.add(Key::new(Level::RingBond, &tokens), 1.0)?;
+            let order = skeleton.order_token(bond);
+            features.add(Key::new(Level::RingSite, &[order, rings]), 1.0)?;
         }
     }
     fusion(skeleton, features, keep)
