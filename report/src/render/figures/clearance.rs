@@ -12,9 +12,20 @@ const DIRECTIONS: usize = 24;
 pub(super) struct Clearance {
     boxes: Vec<Rectangle>,
     segments: Vec<(Point, Point, f64)>,
+    words: Vec<Rectangle>,
+    /// Whether words need a free line to the point that they belong to.
+    with_leaders: bool,
 }
 
 impl Clearance {
+    /// For words that thin lines may lead to.
+    pub(super) fn with_leaders() -> Self {
+        Self {
+            with_leaders: true,
+            ..Self::default()
+        }
+    }
+
     pub(super) fn block(&mut self, part: Rectangle) {
         self.boxes.push(part);
     }
@@ -30,6 +41,14 @@ impl Clearance {
                 .segments
                 .iter()
                 .any(|&(from, to, half)| part.grown(half).clip(from, to).is_some())
+    }
+
+    fn has_leader(&self, from: Point, to: Point) -> bool {
+        !self.with_leaders
+            || self
+                .words
+                .iter()
+                .all(|other| other.clip(from, to).is_none())
     }
 
     /// A free place for words centred as near to `about` as the radii allow, first tried in the direction `towards`; the place is taken
@@ -58,9 +77,10 @@ impl Clearance {
             .iter()
             .flat_map(|&radius| (0..DIRECTIONS).map(move |step| (radius, step)))
             .map(|(radius, step)| around(radius, step))
-            .find(|&at| self.is_free(boxed(at)))
+            .find(|&at| self.is_free(boxed(at)) && self.has_leader(about, at))
             .unwrap_or_else(|| around(radii.last().copied().unwrap_or(0.0), 0));
         self.block(boxed(place));
+        self.words.push(boxed(place));
         place
     }
 }

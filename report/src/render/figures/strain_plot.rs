@@ -24,7 +24,7 @@ const ASIDE: f64 = 12.0;
 pub(super) fn draw(plot: &StrainPlot) -> Canvas {
     let axes = Axes::of(plot);
     let mut canvas = Canvas::default();
-    let mut clearance = Clearance::default();
+    let mut clearance = Clearance::with_leaders();
     axes.draw(&mut canvas, &mut clearance);
     let known = |point: &&PlottedStrain| {
         point.strain_kj_per_mol.is_finite() && point.expanded_kj_per_mol.is_finite()
@@ -203,6 +203,7 @@ fn name(point: &PlottedStrain, at: Point, canvas: &mut Canvas, clearance: &mut C
         ];
         if (edge[0] - at[0]).hypot(edge[1] - at[1]) > 18.0 {
             canvas.line(at, edge, 0.8, Ink::Faint, None);
+            clearance.block_stroke(at, edge, 1.0);
         }
     }
     canvas.words(&point.label, place, LABEL_SIZE, Anchor::Middle, Ink::Strain);
