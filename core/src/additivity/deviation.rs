@@ -2,13 +2,20 @@
 
 use crate::molecule::Element;
 
-/// Number of kinds of contributions: the elements and the non-aromatic rings.
-pub const CONTRIBUTIONS: usize = Element::ALL.len() + 1;
+/// Number of kinds of contributions: the elements, the non-aromatic rings, the polar pairs, the unsaturated atoms.
+pub const CONTRIBUTIONS: usize = Element::ALL.len() + 3;
 
 /// Index of the contribution of non-aromatic rings.
 pub const RINGS: usize = Element::ALL.len();
 
-/// Counts of what adds to the variance of a molecule's deviation from additivity: heavy atoms by element, and non-aromatic rings.
+/// Index of the contribution of polar pairs: heteroatoms bonded, two or three bonds apart.
+pub const POLAR_PAIRS: usize = Element::ALL.len() + 1;
+
+/// Index of the contribution of unsaturated atoms: with a multiple or aromatic bond.
+pub const UNSATURATED: usize = Element::ALL.len() + 2;
+
+/// Counts of what adds to the variance of a molecule's deviation from additivity: heavy atoms by element, non-aromatic rings, pairs
+/// of heteroatoms near each other, unsaturated atoms.
 ///
 /// Each molecule deviates on its own, so a difference of molecules adds the counts with squared stoichiometric numbers.
 #[derive(Clone, Copy, Debug, Default, PartialEq)]
@@ -24,7 +31,7 @@ impl Deviation {
         }
     }
 
-    /// The counts, by element in the order of [`Element::ALL`], then rings.
+    /// The counts, by element in the order of [`Element::ALL`], then rings, polar pairs, unsaturated atoms.
     pub const fn counts(&self) -> &[f64; CONTRIBUTIONS] {
         &self.counts
     }

@@ -2,9 +2,6 @@
 
 use crate::float::sqrt;
 
-/// Quantile of the normal distribution for a two-sided 95 % interval.
-const NORMAL_QUANTILE: f64 = 1.959_963_984_540_054;
-
 /// An estimated enthalpy, or difference of enthalpies, with what makes up its uncertainty.
 ///
 /// The additive part is normal; the deviation from additivity follows Student's distribution, since some molecules lie far
@@ -59,22 +56,27 @@ impl Estimate {
     }
 }
 
-/// Quantile of Student's distribution for a two-sided 95 % interval, for three degrees of freedom or more.
+/// Quantile of Student's distribution for a two-sided 95 % interval, for two degrees of freedom or more.
+///
+/// A polynomial in the reciprocal of the degrees of freedom.
 ///
 /// # Accuracy
-/// 0.2 % at three degrees of freedom, 0.03 % at four, better above.
-///
-/// # Source
-/// `abramowitz-stegun-1964`, 26.7.5.
+/// Better than 4 in 10 million from two degrees of freedom to infinity, against the quantiles of SciPy 1.16 to which it was fitted.
 fn student_quantile(degrees_of_freedom: f64) -> f64 {
-    let z = NORMAL_QUANTILE;
-    let z2 = z * z;
+    const COEFFICIENTS: [f64; 7] = [
+        1.959_964_725_208_040,
+        2.372_190_053_298_324,
+        2.824_602_610_409_485,
+        2.534_045_484_402_069,
+        1.694_884_167_770_036,
+        0.504_644_651_663_655,
+        0.767_065_264_348_848,
+    ];
     let n = 1.0 / degrees_of_freedom;
-    let first = z * (z2 + 1.0) / 4.0;
-    let second = z * ((5.0 * z2 + 16.0) * z2 + 3.0) / 96.0;
-    let third = z * (((3.0 * z2 + 19.0) * z2 + 17.0) * z2 - 15.0) / 384.0;
-    let fourth = z * ((((79.0 * z2 + 776.0) * z2 + 1482.0) * z2 - 1920.0) * z2 - 945.0) / 92_160.0;
-    z + n * (first + n * (second + n * (third + n * fourth)))
+    COEFFICIENTS
+        .iter()
+        .rev()
+        .fold(0.0, |sum, coefficient| sum * n + coefficient)
 }
 
 #[cfg(test)]
@@ -85,6 +87,7 @@ mod tests {
     fn quantiles_are_those_of_the_printed_table() {
         // gum-2008, table G.2, p = 95 %, printed to two decimals.
         for (nu, printed) in [
+            (2.0, 4.30),
             (3.0, 3.18),
             (4.0, 2.78),
             (5.0, 2.57),

@@ -21,19 +21,15 @@ pub enum Level {
     GroupElements,
     /// Groups after Benson: a central atom with its neighbours.
     Group,
-    /// Pairs of adjacent groups.
-    GroupPair,
-    /// A group with the groups around it.
-    Shell,
     /// Pairs of atoms two bonds apart, by class.
     GeminalElements,
     /// Pairs of atoms two bonds apart, with the atom between.
     Geminal,
     /// Pairs of atoms two and three bonds apart, by element and hydrogens.
     NextNearest,
-    /// Pairs of atoms three bonds apart across a bond that is in no ring, by class.
+    /// Pairs of atoms three bonds apart across a bond that is in no aromatic ring, by class.
     VicinalElements,
-    /// Pairs of atoms three bonds apart across a bond that is in no ring.
+    /// Pairs of atoms three bonds apart across a bond that is in no aromatic ring.
     Vicinal,
     /// Pairs of branched atoms that bring substituents five atoms apart face to face.
     OneFive,
@@ -45,11 +41,15 @@ pub enum Level {
     AromaticRing,
     /// Rings by size, smooth in size.
     RingSize,
-    /// Ring atoms by type and the sizes of the rings that they are in.
+    /// Ring atoms by type and ring size, once for each ring.
     RingAtom,
-    /// Ring bonds by types and the sizes of the rings that they are in.
+    /// Ring bonds by types, order and ring size, once for each ring.
     RingBond,
-    /// Pairs of substituents on adjacent ring atoms.
+    /// Atoms and bonds that two rings share, by the sizes of the two, once for each pair of rings.
+    RingJunction,
+    /// Atoms and bonds that several rings share, by the sizes of all.
+    RingEnvironment,
+    /// Pairs of atoms three bonds apart across a ring bond, by class.
     RingVicinal,
     /// Relative configuration in rings.
     RingConfiguration,
@@ -65,8 +65,6 @@ impl Level {
         Self::Bond,
         Self::GroupElements,
         Self::Group,
-        Self::GroupPair,
-        Self::Shell,
         Self::GeminalElements,
         Self::Geminal,
         Self::NextNearest,
@@ -79,6 +77,8 @@ impl Level {
         Self::RingSize,
         Self::RingAtom,
         Self::RingBond,
+        Self::RingJunction,
+        Self::RingEnvironment,
         Self::RingVicinal,
         Self::RingConfiguration,
     ];
@@ -93,8 +93,6 @@ impl Level {
             Self::Bond => "bond",
             Self::GroupElements => "group elements",
             Self::Group => "group",
-            Self::GroupPair => "group pair",
-            Self::Shell => "shell",
             Self::GeminalElements => "geminal elements",
             Self::Geminal => "geminal pair",
             Self::NextNearest => "next-nearest pair",
@@ -107,6 +105,8 @@ impl Level {
             Self::RingSize => "ring size",
             Self::RingAtom => "ring atom",
             Self::RingBond => "ring bond",
+            Self::RingJunction => "ring junction",
+            Self::RingEnvironment => "ring environment",
             Self::RingVicinal => "ring vicinal pair",
             Self::RingConfiguration => "ring configuration",
         }

@@ -16,7 +16,7 @@ mod model;
 mod prior;
 mod skeleton;
 
-pub use deviation::{CONTRIBUTIONS, Deviation, RINGS};
+pub use deviation::{CONTRIBUTIONS, Deviation, POLAR_PAIRS, RINGS, UNSATURATED};
 pub use error::AdditivityError;
 pub use estimate::Estimate;
 pub use features::{Features, Term};

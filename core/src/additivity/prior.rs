@@ -14,7 +14,8 @@ pub struct Prior {
     /// Width of the squared-exponential correlation between ring sizes, in the natural logarithm of the size.
     pub ring_width: f64,
     /// Scale of the heavy-tailed deviation of a molecule from additivity for one heavy atom of each element in
-    /// [`Element::ALL`](crate::molecule::Element::ALL), then for one non-aromatic ring, kJ/mol; their squares add up.
+    /// [`Element::ALL`](crate::molecule::Element::ALL), then for one non-aromatic ring, one polar pair and one
+    /// unsaturated atom, kJ/mol; their squares add up.
     pub deviation_kj_per_mol: [f64; CONTRIBUTIONS],
     /// Degrees of freedom of the heavy-tailed distributions.
     pub degrees_of_freedom: f64,

@@ -2,15 +2,15 @@
 
 use std::collections::BTreeMap;
 
-use serde::{Deserialize, Serialize};
+use serde::Serialize;
 use tautring_core::additivity::{AdditivityError, CONTRIBUTIONS, Level, Prior, cholesky};
 use tautring_core::molecule::Element;
 
 use super::matrices::{LevelMatrices, invert, quadratic_form, trace_of_product};
 use crate::dataset::Dataset;
 
-/// What the search finds and the tables are made from.
-#[derive(Clone, Debug, Serialize, Deserialize)]
+/// What the search finds, as a record to read.
+#[derive(Clone, Debug, Serialize)]
 pub struct Hyperparameters {
     /// Scale of the deviation of a molecule from additivity for one heavy atom of each element and one ring, kJ/mol.
     pub deviation_kj_per_mol: BTreeMap<String, f64>,
@@ -23,29 +23,8 @@ pub struct Hyperparameters {
 }
 
 impl Hyperparameters {
-    /// The prior as the core takes it; a level that is not named contributes nothing.
-    pub fn prior(&self) -> Prior {
-        let mut tau = [0.0; Level::ALL.len()];
-        for (slot, level) in tau.iter_mut().zip(Level::ALL) {
-            *slot = self
-                .tau_kj_per_mol
-                .get(level.name())
-                .copied()
-                .unwrap_or(0.0);
-        }
-        let mut deviation = [0.0; CONTRIBUTIONS];
-        for (slot, name) in deviation.iter_mut().zip(contribution_names()) {
-            *slot = self.deviation_kj_per_mol.get(name).copied().unwrap_or(0.0);
-        }
-        Prior {
-            tau_kj_per_mol: tau,
-            ring_width: self.ring_width,
-            deviation_kj_per_mol: deviation,
-            degrees_of_freedom: self.degrees_of_freedom,
-        }
-    }
-
-    fn from_prior(prior: &Prior) -> Self {
+    /// The hyperparameters of a prior, to three significant digits.
+    pub fn of(prior: &Prior) -> Self {
         Self {
             tau_kj_per_mol: Level::ALL
                 .iter()
@@ -61,15 +40,15 @@ impl Hyperparameters {
     }
 }
 
-/// Names of the contributions to the deviation from additivity: elements, then rings.
+/// Names of the contributions to the deviation from additivity: elements, then rings, polar pairs, unsaturated atoms.
 fn contribution_names() -> impl Iterator<Item = &'static str> {
     Element::ALL
         .into_iter()
         .map(Element::symbol)
-        .chain(["ring"])
+        .chain(["ring", "polar pair", "unsaturated atom"])
 }
 
-/// Rounds to three significant digits, which is more than the likelihood resolves.
+/// Rounds to three significant digits; the tables keep all.
 fn three_digits(x: f64) -> f64 {
     format!("{x:.2e}").parse().unwrap_or(x)
 }
@@ -152,23 +131,6 @@ impl Posterior {
         })
     }
 
-    /// Conditions the measurements on a given prior and settles the weights of the heavy tails.
-    ///
-    /// # Errors
-    /// [`AdditivityError::NotPositiveDefinite`] for a prior without any spread.
-    pub fn condition(
-        data: &Dataset,
-        matrices: &LevelMatrices,
-        prior: Prior,
-    ) -> Result<Self, AdditivityError> {
-        let mut weights = Weights::equal(data);
-        for _ in 0..WEIGHT_ROUNDS {
-            let posterior = Self::new(data, matrices, prior, &weights)?;
-            weights = posterior.weights(data);
-        }
-        Self::new(data, matrices, prior, &weights)
-    }
-
     /// Expected precision weights of errors and deviations under Student's distribution.
     fn weights(&self, data: &Dataset) -> Weights {
         let nu = self.prior.degrees_of_freedom;
@@ -205,9 +167,6 @@ impl Posterior {
 
 /// Least deviation from additivity that one heavy atom brings, kJ/mol: elements of few measurements would else pass for exactly additive.
 const LEAST_DEVIATION_KJ_PER_MOL: f64 = 0.25;
-
-/// Rounds after which the weights of the heavy tails have settled.
-const WEIGHT_ROUNDS: usize = 12;
 
 /// Squared scale of the deviation of a molecule, kJ²/mol².
 fn squared_scale(data: &Dataset, members: &[usize], prior: &Prior) -> f64 {
@@ -250,7 +209,7 @@ pub fn search(
     start: Prior,
     rounds: usize,
     mut progress: impl FnMut(usize, &Posterior),
-) -> Result<Hyperparameters, AdditivityError> {
+) -> Result<Posterior, AdditivityError> {
     let n = data.rows.len();
     let mut prior = start;
     let mut weights = Weights::equal(data);
@@ -291,5 +250,5 @@ pub fn search(
         }
         weights = posterior.weights(data);
     }
-    Ok(Hyperparameters::from_prior(&prior))
+    Posterior::new(data, matrices, prior, &weights)
 }

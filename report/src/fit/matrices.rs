@@ -45,7 +45,7 @@ impl LevelMatrices {
 }
 
 /// The inverse of a matrix from its packed Cholesky factor, as a packed lower triangle.
-pub fn invert(factor: &[f64], n: usize) -> Vec<f64> {
+pub(super) fn invert(factor: &[f64], n: usize) -> Vec<f64> {
     let mut columns: Vec<Vec<f64>> = vec![Vec::new(); n];
     let threads = std::thread::available_parallelism().map_or(1, usize::from);
     let chunk = n.div_ceil(threads * 8).max(1);
@@ -77,7 +77,7 @@ pub fn invert(factor: &[f64], n: usize) -> Vec<f64> {
 }
 
 /// Sum over all entries of the elementwise product of two symmetric packed matrices: the trace of their product.
-pub fn trace_of_product(a: &[f64], b: &[f64], n: usize) -> f64 {
+pub(super) fn trace_of_product(a: &[f64], b: &[f64], n: usize) -> f64 {
     let total = cholesky::dot(a, b);
     let diagonal: f64 = (0..n)
         .map(|i| cholesky::packed_len(i + 1) - 1)
@@ -87,7 +87,7 @@ pub fn trace_of_product(a: &[f64], b: &[f64], n: usize) -> f64 {
 }
 
 /// vᵀ M v for a symmetric packed matrix.
-pub fn quadratic_form(packed: &[f64], v: &[f64]) -> f64 {
+pub(super) fn quadratic_form(packed: &[f64], v: &[f64]) -> f64 {
     let mut total = 0.0;
     for (i, &x) in v.iter().enumerate() {
         let row = &packed[cholesky::packed_len(i)..cholesky::packed_len(i + 1)];

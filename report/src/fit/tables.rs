@@ -106,7 +106,7 @@ impl Tables {
     /// The tables, but for the factor, as a Rust file of the core.
     pub fn rust_source(&self) -> String {
         let mut source = String::from(
-            "//! Generated from `data/` by `cargo run --release --bin tautring-fit -- tables`; not edited by hand.\n\n",
+            "//! Generated from `data/` by `cargo run --release --bin tautring-fit`; not edited by hand.\n\n",
         );
         source.push_str("#![cfg_attr(rustfmt, rustfmt_skip)]\n\n");
         source.push_str("use crate::additivity::{Level, Prior};\n\n");

@@ -187,17 +187,17 @@ fn elements_only(row: &Row, elements: &[Element]) -> bool {
 }
 
 /// Prior uncertainty up to which an estimate counts as supported, kJ/mol.
-pub const SUPPORTED_KJ_PER_MOL: f64 = 8.0;
+const SUPPORTED_KJ_PER_MOL: f64 = 8.0;
 
 /// The table of left-out errors by family, as text.
 pub fn describe(data: &Dataset, errors: &[LeftOut]) -> String {
     let mut text = String::from(
-        "Left-out errors, kJ/mol (each constitution predicted from all others; coverage of the 95 % interval for a new measurement)\n",
+        "Left-out errors, kJ/mol (each constitution predicted from all others; coverage of the 95 % interval for a new measurement; score = mean logarithm of the predictive density)\n",
     );
     let _ = writeln!(
         text,
-        "{:34}{:>6}{:>8}{:>8}{:>8}{:>10}",
-        "family", "n", "median", "mean", "rms", "coverage"
+        "{:46}{:>6}{:>8}{:>8}{:>8}{:>10}{:>8}",
+        "family", "n", "median", "mean", "rms", "coverage", "score"
     );
     for supported in [false, true] {
         for (name, belongs) in FAMILIES {
@@ -209,7 +209,7 @@ pub fn describe(data: &Dataset, errors: &[LeftOut]) -> String {
                 let mark = if supported { ", u at most 8" } else { "" };
                 let _ = writeln!(
                     text,
-                    "{:34}{:>6}{:>8.2}{:>8.2}{:>8.2}{:>9.1}%{:>8.3}",
+                    "{:46}{:>6}{:>8.2}{:>8.2}{:>8.2}{:>9.1}%{:>8.3}",
                     format!("{name}{mark}"),
                     s.count,
                     s.median_kj_per_mol,

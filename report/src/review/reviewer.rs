@@ -20,7 +20,7 @@ use crate::dataset::{Dataset, DatasetError, HostFeatures};
 use crate::structure::{HostMolecule, Structure, identity, skeleton};
 
 /// Name of the convention of strain, as reports and JSON give it.
-pub const CONVENTION: &str = "group increments, gas, 298.15 K";
+const CONVENTION: &str = "group increments, gas, 298.15 K";
 
 /// Share of the absolute weight that the listed evidence carries together.
 const EVIDENCE_SHARE: f64 = 0.8;
@@ -43,7 +43,7 @@ impl fmt::Display for ReviewError {
         match self {
             Self::Data(reason) => write!(
                 f,
-                "{reason}; make the tables anew with `cargo run --release --bin tautring-fit -- tables`"
+                "{reason}; make the tables anew with `cargo run --release --bin tautring-fit`"
             ),
             Self::Additivity(error) => error.fmt(f),
         }

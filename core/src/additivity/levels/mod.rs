@@ -65,12 +65,18 @@ fn note_deviation<const A: usize, const B: usize, const F: usize>(
 ) {
     for (_, site) in skeleton.sites() {
         features.add_deviation(site.kind.element_token() as usize);
+        if !site.kind.is_saturated() {
+            features.add_deviation(deviation::UNSATURATED);
+        }
     }
     let molecule = skeleton.molecule;
     for ring in molecule.rings().iter() {
         if !is_aromatic_ring(molecule, ring) {
             features.add_deviation(deviation::RINGS);
         }
+    }
+    for _ in 0..paths::polar_pairs(skeleton) {
+        features.add_deviation(deviation::POLAR_PAIRS);
     }
 }
 

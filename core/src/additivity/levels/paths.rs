@@ -6,6 +6,7 @@ use crate::additivity::error::AdditivityError;
 use crate::additivity::features::Features;
 use crate::additivity::key::Key;
 use crate::additivity::skeleton::{AtomType, Site, Skeleton};
+use crate::molecule::{Element, Neighbour};
 
 /// Counts pairs of atoms two bonds apart.
 pub(super) fn geminal<const A: usize, const B: usize, const F: usize>(
@@ -49,23 +50,29 @@ pub(super) fn next_nearest<const A: usize, const B: usize, const F: usize>(
         }
     }
     for (_, ends, _) in skeleton.bonds() {
-        for [first, _, _, last] in paths(skeleton, ends, |_| true) {
+        for Path {
+            sites: [first, _, _, last],
+            ..
+        } in paths(skeleton, ends)
+        {
             features.add(key(3, first, last), 1.0)?;
         }
     }
     Ok(())
 }
 
-/// Counts pairs of atoms three bonds apart across bonds that are in no ring.
+/// Counts pairs of atoms three bonds apart across bonds that are in no aromatic ring.
+///
+/// Ring bonds count like those of a chain, so that the ring levels hold only what a chain has not.
 pub(super) fn vicinal<const A: usize, const B: usize, const F: usize>(
     skeleton: &Skeleton<A, B>,
     features: &mut Features<F>,
 ) -> Result<(), AdditivityError> {
     for (bond, ends, _) in skeleton.bonds() {
-        if skeleton.is_ring_bond(bond) {
+        if skeleton.is_ring_bond(bond) && skeleton.bond_rings(bond) == 0 {
             continue;
         }
-        for path in paths(skeleton, ends, |_| true) {
+        for path in paths(skeleton, ends) {
             let order = skeleton.order_token(bond);
             features.add(key(Level::Vicinal, path, order, AtomType::token), 1.0)?;
             features.add(
@@ -77,7 +84,9 @@ pub(super) fn vicinal<const A: usize, const B: usize, const F: usize>(
     Ok(())
 }
 
-/// Counts pairs of substituents on adjacent atoms of non-aromatic rings, on the atoms that `keep` accepts.
+/// Counts pairs of atoms three bonds apart across bonds of non-aromatic rings, on the atoms that `keep` accepts.
+///
+/// How many of the outer bonds are in a ring, too, tells substituents from the ring itself.
 pub(super) fn ring_vicinal<const A: usize, const B: usize, const F: usize>(
     skeleton: &Skeleton<A, B>,
     features: &mut Features<F>,
@@ -87,43 +96,77 @@ pub(super) fn ring_vicinal<const A: usize, const B: usize, const F: usize>(
         if skeleton.bond_rings(bond) == 0 || !keep(ends[0]) {
             continue;
         }
-        let outside = |bond: usize| skeleton.bond_rings(bond) == 0;
-        for path in paths(skeleton, ends, outside) {
-            let order = skeleton.order_token(bond);
-            features.add(
-                key(Level::RingVicinal, path, order, AtomType::class_token),
-                1.0,
-            )?;
+        for path in paths(skeleton, ends) {
+            let order = skeleton.order_token(bond) << 2 | path.ring_bonds;
+            let key = key(Level::RingVicinal, path, order, AtomType::class_token);
+            features.add(key, 1.0)?;
         }
     }
     Ok(())
 }
 
-/// The sites along the paths of three bonds across a bond, over outer bonds that `through` accepts.
+/// How many paths of one, two or three bonds have a heteroatom at both ends.
+pub(super) fn polar_pairs<const A: usize, const B: usize>(skeleton: &Skeleton<A, B>) -> usize {
+    let polar = |site: Site| site.kind.element_token() != Element::C as u64;
+    let bonded = skeleton
+        .bonds()
+        .filter(|(_, _, [a, b])| polar(*a) && polar(*b))
+        .count();
+    let geminal: usize = skeleton
+        .sites()
+        .map(|(centre, _)| {
+            let ends = skeleton.heavy_neighbours(centre);
+            let polar_ends = ends.filter(|&(_, site)| polar(site)).count();
+            polar_ends * polar_ends.saturating_sub(1) / 2
+        })
+        .sum();
+    let vicinal = skeleton
+        .bonds()
+        .flat_map(|(_, ends, _)| paths(skeleton, ends))
+        .filter(|path| polar(path.sites[0]) && polar(path.sites[3]))
+        .count();
+    bonded + geminal + vicinal
+}
+
+/// A path of three bonds.
+#[derive(Clone, Copy)]
+struct Path {
+    /// The four atoms.
+    sites: [Site; 4],
+    /// How many of the two outer bonds are in a non-aromatic ring.
+    ring_bonds: u64,
+}
+
+/// The paths of three bonds across a bond.
+///
+/// In a ring of three both ends are the same atom; such a path counts, so that each ring bond has one as each bond of a chain has.
 fn paths<const A: usize, const B: usize>(
     skeleton: &Skeleton<A, B>,
     [a, b]: [usize; 2],
-    through: impl Fn(usize) -> bool + Copy,
-) -> impl Iterator<Item = [Site; 4]> {
+) -> impl Iterator<Item = Path> {
     let outer = move |from: usize, not: usize| {
         skeleton
             .heavy_neighbours(from)
-            .filter(move |(n, _)| usize::from(n.atom) != not && through(usize::from(n.bond)))
+            .filter(move |(n, _)| usize::from(n.atom) != not)
     };
     let inner = [skeleton.site(a), skeleton.site(b)];
+    let in_ring = |n: Neighbour| u64::from(skeleton.bond_rings(usize::from(n.bond)) != 0);
     outer(a, b).flat_map(move |(n, first)| {
         outer(b, a).filter_map(move |(m, last)| {
             let [Some(second), Some(third)] = inner else {
                 return None;
             };
-            (n.atom != m.atom).then_some([first, second, third, last])
+            Some(Path {
+                sites: [first, second, third, last],
+                ring_bonds: in_ring(n) + in_ring(m),
+            })
         })
     })
 }
 
 /// The key of a path, the same from both ends.
-fn key(level: Level, path: [Site; 4], order: u64, token: impl Fn(AtomType) -> u64) -> Key {
-    let [a, b, c, d] = path.map(|site| token(site.kind));
+fn key(level: Level, path: Path, order: u64, token: impl Fn(AtomType) -> u64) -> Key {
+    let [a, b, c, d] = path.sites.map(|site| token(site.kind));
     let tokens = if [a, b] <= [d, c] {
         [a, b, c, d, order]
     } else {

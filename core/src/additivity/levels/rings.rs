@@ -21,17 +21,20 @@ pub(super) fn count<const A: usize, const B: usize, const F: usize>(
         features.add(Key::smooth(Level::RingSize, &[], ring.len()), 1.0)?;
     }
     for (_, site) in skeleton.sites().filter(|&(i, s)| s.rings != 0 && keep(i)) {
-        features.add(
-            Key::new(Level::RingAtom, &[site.kind.token(), site.rings]),
-            1.0,
-        )?;
+        for size in sizes(site.rings) {
+            features.add(Key::new(Level::RingAtom, &[site.kind.token(), size]), 1.0)?;
+        }
+        shared(features, ATOM, site.rings)?;
     }
     for (bond, ends, [a, b]) in skeleton.bonds() {
         let rings = skeleton.bond_rings(bond);
         if rings != 0 && keep(ends[0]) {
             let [low, high] = sorted(a.kind.token(), b.kind.token());
-            let tokens = [low, high, skeleton.order_token(bond), rings];
-            features.add(Key::new(Level::RingBond, &tokens), 1.0)?;
+            let order = skeleton.order_token(bond);
+            for size in sizes(rings) {
+                features.add(Key::new(Level::RingBond, &[low, high, order, size]), 1.0)?;
+            }
+            shared(features, BOND, rings)?;
         }
     }
     Ok(())
@@ -40,4 +43,34 @@ pub(super) fn count<const A: usize, const B: usize, const F: usize>(
 /// Whether a ring lies on atoms that `keep` accepts.
 fn kept(ring: &[u16], keep: &dyn Fn(usize) -> bool) -> bool {
     ring.first().is_some_and(|&atom| keep(usize::from(atom)))
+}
+
+/// Tokens that tell shared atoms from shared bonds.
+const ATOM: u64 = 0;
+const BOND: u64 = 1;
+
+/// Counts an atom or bond that several rings share: each pair of rings, and all together.
+fn shared<const F: usize>(
+    features: &mut Features<F>,
+    what: u64,
+    rings: u64,
+) -> Result<(), AdditivityError> {
+    for (i, first) in sizes(rings).enumerate() {
+        for second in sizes(rings).skip(i + 1) {
+            let [low, high] = sorted(first, second);
+            features.add(Key::new(Level::RingJunction, &[what, low, high]), 1.0)?;
+        }
+    }
+    if sizes(rings).nth(1).is_some() {
+        features.add(Key::new(Level::RingEnvironment, &[what, rings]), 1.0)?;
+    }
+    Ok(())
+}
+
+/// The ring sizes in a number's digits to base 64.
+fn sizes(rings: u64) -> impl Iterator<Item = u64> {
+    (0..)
+        .map(move |digit| rings >> (6 * digit) & 0x3f)
+        .take(10)
+        .take_while(|&size| size != 0)
 }
