@@ -4,7 +4,7 @@ use super::bibliography::Citations;
 use super::block::{Block, Column, Note, NoteKind, Table};
 use super::inline::Inline;
 use super::report::heading;
-use super::rounding::as_published;
+use super::rounding::{as_published, rounded, uncertainty};
 use crate::review::{CheckOutcome, CheckValue};
 
 pub(super) fn blocks(checks: &[CheckValue], citations: &mut Citations) -> Vec<Block> {
@@ -34,6 +34,7 @@ pub(super) fn blocks(checks: &[CheckValue], citations: &mut Citations) -> Vec<Bl
             Column::words("Subject"),
             Column::numbers("Published"),
             Column::numbers("Recomputed"),
+            Column::numbers("Difference"),
             Column::numbers("Tolerance"),
             Column::words("Unit"),
             Column::words("Verdict"),
@@ -52,7 +53,10 @@ fn row(check: &CheckValue, citations: &mut Citations) -> Vec<Inline> {
         Inline::new().code(check.subject.as_str()),
         as_published(check.published).into(),
         recomputed(check).into(),
-        as_published(check.tolerance).into(),
+        rounded(check.computed - check.published, check.tolerance)
+            .value
+            .into(),
+        uncertainty(check.tolerance).into(),
         check.unit.as_str().into(),
         match check.outcome {
             CheckOutcome::Agrees => Inline::from("agrees"),
@@ -66,5 +70,5 @@ fn row(check: &CheckValue, citations: &mut Citations) -> Vec<Inline> {
 
 /// The recomputed value to a tenth of the tolerance, so that the verdict can be followed.
 fn recomputed(check: &CheckValue) -> String {
-    super::rounding::rounded(check.computed, check.tolerance).value
+    rounded(check.computed, check.tolerance).value
 }

@@ -5,6 +5,7 @@ use super::block::{Block, Column, Note, NoteKind, Table};
 use super::inline::Inline;
 use super::report::heading;
 use super::rounding::{fixed, rounded, uncertainty};
+use super::strain::coverage_factor;
 use super::summary::basis_word;
 use crate::review::{Agreement, Comparison, Evidence, FormationEnthalpy};
 
@@ -127,7 +128,13 @@ fn verdict(comparison: &Comparison, citations: &mut Citations) -> Option<Block> 
             (
                 NoteKind::Information,
                 opening
-                    .text(format!("{higher} The case file settles it: "))
+                    .text(format!("{higher} The case file settles it and keeps the "))
+                    .strong(if comparison.keeps_estimate {
+                        "estimate"
+                    } else {
+                        "measured value"
+                    })
+                    .text(". ")
                     .emphasis(settled),
             )
         }
@@ -142,13 +149,14 @@ fn values(gas: &FormationEnthalpy) -> Block {
     let used = rounded(gas.quantity.value_kj_per_mol, gas.quantity.u_kj_per_mol);
     let estimate = rounded(gas.estimate.value_kj_per_mol, gas.estimate.u_kj_per_mol);
     Block::Table(Table {
-        caption: "The value that this report uses, and the additivity's estimate from all measurements that it may lean on. U (95 %) is for the true value.".into(),
+        caption: "The value that this report uses, and the additivity's estimate from all measurements that it may lean on. U (95 %) is for the true value, k = U/u.".into(),
         columns: vec![
             Column::words("Value"),
             Column::words("Basis"),
             Column::numbers("Enthalpy of formation, kJ/mol"),
             Column::numbers("u, kJ/mol"),
             Column::numbers("U, kJ/mol"),
+            Column::numbers("k"),
         ],
         rows: vec![
             vec![
@@ -157,13 +165,15 @@ fn values(gas: &FormationEnthalpy) -> Block {
                 Inline::new().strong(used.value),
                 used.uncertainty.into(),
                 uncertainty(gas.quantity.expanded_kj_per_mol).into(),
+                coverage_factor(gas.quantity).into(),
             ],
             vec![
                 "Estimate".into(),
                 "estimated".into(),
                 estimate.value.into(),
                 estimate.uncertainty.into(),
-                "—".into(),
+                uncertainty(gas.estimate.expanded_kj_per_mol).into(),
+                coverage_factor(gas.estimate).into(),
             ],
         ],
     })

@@ -7,24 +7,30 @@ use super::drawing::{Drawing, PlottedStrain, StrainPlot};
 use super::inline::{Inline, subscripted};
 use super::inputs::Inputs;
 use super::report::heading;
-use super::rounding::{fixed, rounded};
-use crate::review::{Basis, SubstanceReview};
+use super::rounding::rounded;
+use crate::review::Basis;
 
-pub(super) fn blocks(inputs: &Inputs<'_>) -> Vec<Block> {
+pub(super) fn blocks(inputs: &Inputs) -> Vec<Block> {
     let mut blocks = vec![heading(2, "Summary"), table(inputs)];
-    blocks.extend(flags(inputs.reviews));
+    blocks.extend(not_reviewed(inputs));
+    blocks.extend(flags(inputs));
     blocks.extend(plot(inputs));
     blocks
 }
 
-fn table(inputs: &Inputs<'_>) -> Block {
-    let k = inputs.coverage_factor;
+fn table(inputs: &Inputs) -> Block {
     let rows = inputs
-        .reviews
+        .entries
         .iter()
-        .map(|review| {
+        .map(|entry| {
+            let Ok(review) = &entry.finding else {
+                let mut row = vec![Inline::from(entry.particulars.substance.as_str())];
+                row.extend((0..6).map(|_| Inline::from("—")));
+                row.push("not reviewed".into());
+                return row;
+            };
             let strain = &review.strain;
-            let expanded = k * strain.quantity.u_kj_per_mol;
+            let expanded = strain.quantity.expanded_kj_per_mol;
             let gas = &review.gas;
             vec![
                 Inline::from(review.name.as_str()),
@@ -35,23 +41,22 @@ fn table(inputs: &Inputs<'_>) -> Block {
                 rounded(strain.value_kcal_per_mol, expanded / KJ_PER_KCAL)
                     .interval()
                     .into(),
-                rounded(strain.j_per_g, k * strain.u_j_per_g)
+                rounded(strain.j_per_g, strain.expanded_j_per_g)
                     .interval()
                     .into(),
-                rounded(gas.quantity.value_kj_per_mol, gas.quantity.expanded_kj_per_mol)
-                    .interval()
-                    .into(),
+                rounded(
+                    gas.quantity.value_kj_per_mol,
+                    gas.quantity.expanded_kj_per_mol,
+                )
+                .interval()
+                .into(),
                 basis_word(gas.basis).into(),
                 review.flags.len().to_string().into(),
             ]
         })
         .collect();
     Block::Table(Table {
-        caption: format!(
-            "Strain and gas-phase enthalpy of formation at 298.15 K, each with its expanded uncertainty U (95 %, for the true value; k = {} for estimates).",
-            fixed(k, 2)
-        )
-        .into(),
+        caption: "Strain (sum of the ring levels) and gas-phase enthalpy of formation at 298.15 K, each with its expanded uncertainty U (95 %, for the true value).".into(),
         columns: vec![
             Column::words("Substance"),
             Column::words("Formula"),
@@ -73,9 +78,25 @@ pub(super) const fn basis_word(basis: Basis) -> &'static str {
     }
 }
 
-fn flags(reviews: &[SubstanceReview]) -> Option<Block> {
-    let paragraphs: Vec<_> = reviews
+fn not_reviewed(inputs: &Inputs) -> Option<Block> {
+    let paragraphs: Vec<_> = inputs
+        .entries
         .iter()
+        .filter_map(|entry| {
+            let reason = entry.finding.as_ref().err()?;
+            let name = format!("{} could not be reviewed: ", entry.particulars.substance);
+            Some(Inline::new().strong(name).text(reason.as_str()))
+        })
+        .collect();
+    (!paragraphs.is_empty()).then_some(Block::Note(Note {
+        kind: NoteKind::Warning,
+        paragraphs,
+    }))
+}
+
+fn flags(inputs: &Inputs) -> Option<Block> {
+    let paragraphs: Vec<_> = inputs
+        .reviews()
         .flat_map(|review| {
             review.flags.iter().map(|flag| {
                 Inline::new()
@@ -91,21 +112,19 @@ fn flags(reviews: &[SubstanceReview]) -> Option<Block> {
 }
 
 /// The plot, when a substance has a ring system of one ring: only there is "the ring size" one number.
-fn plot(inputs: &Inputs<'_>) -> Option<Block> {
-    let k = inputs.coverage_factor;
+fn plot(inputs: &Inputs) -> Option<Block> {
     let case: Vec<_> = inputs
-        .reviews
-        .iter()
+        .reviews()
         .flat_map(|review| {
             review
                 .strain
                 .ring_systems
                 .iter()
-                .filter_map(move |system| match system.sizes[..] {
+                .filter_map(|system| match system.sizes[..] {
                     [size] => Some(PlottedStrain {
                         size,
                         strain_kj_per_mol: system.quantity.value_kj_per_mol,
-                        expanded_kj_per_mol: k * system.quantity.u_kj_per_mol,
+                        expanded_kj_per_mol: system.quantity.expanded_kj_per_mol,
                         label: review.name.clone(),
                     }),
                     _ => None,
@@ -121,7 +140,7 @@ fn plot(inputs: &Inputs<'_>) -> Option<Block> {
         .map(|ring| PlottedStrain {
             size: ring.size,
             strain_kj_per_mol: ring.strain_kj_per_mol,
-            expanded_kj_per_mol: k * ring.u_kj_per_mol,
+            expanded_kj_per_mol: ring.expanded_kj_per_mol,
             label: String::new(),
         })
         .collect();
