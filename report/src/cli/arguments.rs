@@ -47,7 +47,7 @@ pub(crate) fn run() -> ExitCode {
         Command::Check(check) => check.run(),
         Command::Verify(verify) => verify.run(),
         Command::Completions(completions) => with_command(|c| completions::write(&completions, c)),
-        Command::Man => with_command(|c| man::write(c)),
+        Command::Man => with_command(man::write),
     })
 }
 

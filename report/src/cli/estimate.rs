@@ -6,6 +6,7 @@ use clap::Args;
 use serde_json::{Value, json};
 use tautring_report::render::contract;
 use tautring_report::review::{Reviewer, SubstanceReview};
+use tautring_report::structure::StructureError;
 
 use super::card::{LEGEND, card};
 use super::given::{Given, given};
@@ -115,6 +116,10 @@ const SHOWN: usize = 100;
 
 /// The reason, with the offending part of a SMILES marked under it.
 fn complaint(given: &Given, reason: &str) -> String {
+    if let Err(StructureError::File { .. }) = given.structure {
+        // The reason names the file already.
+        return reason.to_owned();
+    }
     let short: String = given.place().chars().take(SHOWN).collect();
     let message = format!("{short}: {reason}");
     let span = given

@@ -11,22 +11,10 @@ pub(super) fn blocks(checks: &[CheckValue], citations: &mut Citations) -> Vec<Bl
     if checks.is_empty() {
         return Vec::new();
     }
-    let off = checks
-        .iter()
-        .filter(|check| check.outcome == CheckOutcome::Off)
-        .count();
     let mut blocks = vec![
         heading(2, "Check values"),
         "The program recomputed these published values when it made this report. Agreement shows that the program is the one that was checked; it says nothing of a substance that no one has measured.".into(),
     ];
-    if off > 0 {
-        blocks.push(Block::Note(Note {
-            kind: NoteKind::Warning,
-            paragraphs: vec![
-                format!("{off} of {} check values are off. Do not use this report before that is understood.", checks.len()).into(),
-            ],
-        }));
-    }
     blocks.push(Block::Table(Table {
         caption: "Check values: published, recomputed now, largest difference that still agrees, and why that one.".into(),
         columns: vec![
@@ -45,6 +33,26 @@ pub(super) fn blocks(checks: &[CheckValue], citations: &mut Citations) -> Vec<Bl
         rows: checks.iter().map(|check| row(check, citations)).collect(),
     }));
     blocks
+}
+
+/// A warning when a check value is off: it stands where nobody can miss it.
+pub(super) fn warning(checks: &[CheckValue]) -> Option<Block> {
+    let off = checks
+        .iter()
+        .filter(|check| check.outcome == CheckOutcome::Off)
+        .count();
+    (off > 0).then(|| {
+        Block::Note(Note {
+            kind: NoteKind::Warning,
+            paragraphs: vec![
+                format!(
+                    "{off} of {} check values are off (section Check values). Do not use this report before that is understood.",
+                    checks.len()
+                )
+                .into(),
+            ],
+        })
+    })
 }
 
 fn row(check: &CheckValue, citations: &mut Citations) -> Vec<Inline> {

@@ -9,6 +9,9 @@ use super::strain::coverage_factor;
 use super::summary::basis_word;
 use crate::review::{Agreement, Comparison, Evidence, FormationEnthalpy};
 
+/// Measurements that the table of evidence lists: beyond the first dozen each moves the estimate by a few per cent of its own error.
+const EVIDENCE_SHOWN: usize = 12;
+
 pub(super) fn blocks(gas: &FormationEnthalpy, citations: &mut Citations) -> Vec<Block> {
     let mut blocks = vec![heading(4, "Enthalpy of formation, gas, 298.15 K")];
     if gas.comparisons.is_empty() {
@@ -183,6 +186,7 @@ fn evidence(gas: &FormationEnthalpy, citations: &mut Citations) -> Block {
     let rows = gas
         .evidence
         .iter()
+        .take(EVIDENCE_SHOWN)
         .map(|evidence: &Evidence| {
             let value = rounded(evidence.value_kj_per_mol, evidence.u_kj_per_mol);
             vec![
@@ -197,7 +201,11 @@ fn evidence(gas: &FormationEnthalpy, citations: &mut Citations) -> Block {
         .collect();
     Block::Table(Table {
         caption: format!(
-            "The measurements that the estimate leans on most; together they carry {} % of the absolute weight. A weight says how far the estimate moves, in kJ/mol, when the measured value moves by 1 kJ/mol; it may be negative.",
+            "The measurements that the estimate leans on most. A weight says how far the estimate moves, in kJ/mol, when the measured value moves by 1 kJ/mol; it may be negative. {} carry {} % of the absolute weight; report.json lists them all.",
+            match gas.evidence.len().saturating_sub(EVIDENCE_SHOWN) {
+                0 => "Those listed".to_owned(),
+                more => format!("Those listed and {more} more"),
+            },
             fixed(100.0 * gas.evidence_share, 0)
         )
         .into(),

@@ -12,6 +12,7 @@ use super::{blocks_from_markdown, cautions, checks, provenance, substance, summa
 pub fn report(inputs: &Inputs) -> Document {
     let mut citations = Citations::new(Bibliography::of_project());
     let mut blocks = vec![front(inputs)];
+    blocks.extend(checks::warning(&inputs.checks));
     blocks.extend(cautions::blocks());
     blocks.extend(summary::blocks(inputs));
     if let Some(notes) = &inputs.header.notes {

@@ -7,7 +7,7 @@ use super::drawing::{Drawing, PlottedStrain, StrainPlot};
 use super::inline::{Inline, subscripted};
 use super::inputs::Inputs;
 use super::report::heading;
-use super::rounding::rounded;
+use super::rounding::{Rounded, rounded};
 use crate::review::Basis;
 
 pub(super) fn blocks(inputs: &Inputs) -> Vec<Block> {
@@ -32,18 +32,19 @@ fn table(inputs: &Inputs) -> Block {
             let strain = &review.strain;
             let expanded = strain.quantity.expanded_kj_per_mol;
             let gas = &review.gas;
+            let of_rings = |interval: Rounded| -> Inline {
+                if strain.ring_systems.is_empty() {
+                    "no ring".into()
+                } else {
+                    interval.interval().into()
+                }
+            };
             vec![
                 Inline::from(review.name.as_str()),
                 subscripted(&review.formula).into(),
-                rounded(strain.quantity.value_kj_per_mol, expanded)
-                    .interval()
-                    .into(),
-                rounded(strain.value_kcal_per_mol, expanded / KJ_PER_KCAL)
-                    .interval()
-                    .into(),
-                rounded(strain.j_per_g, strain.expanded_j_per_g)
-                    .interval()
-                    .into(),
+                of_rings(rounded(strain.quantity.value_kj_per_mol, expanded)),
+                of_rings(rounded(strain.value_kcal_per_mol, expanded / KJ_PER_KCAL)),
+                of_rings(rounded(strain.j_per_g, strain.expanded_j_per_g)),
                 rounded(
                     gas.quantity.value_kj_per_mol,
                     gas.quantity.expanded_kj_per_mol,
@@ -56,7 +57,7 @@ fn table(inputs: &Inputs) -> Block {
         })
         .collect();
     Block::Table(Table {
-        caption: "Strain (sum of the ring levels) and gas-phase enthalpy of formation at 298.15 K, each with its expanded uncertainty U (95 %, for the true value).".into(),
+        caption: "Strain (sum of the ring levels) and gas-phase enthalpy of formation at 298.15 K, each with its expanded uncertainty U (95 %, for the true value). \"No ring\" means none that counts as strained: aromatic rings do not.".into(),
         columns: vec![
             Column::words("Substance"),
             Column::words("Formula"),
@@ -158,7 +159,7 @@ fn plot(inputs: &Inputs) -> Option<Block> {
         .collect();
     Some(Block::Figure(Figure {
         id: "strain-by-ring-size".to_owned(),
-        caption: "Strain of the ring systems that are a single ring (filled) among the measured unsubstituted cycloalkanes (open), against ring size. Bars are the expanded uncertainty U (95 %) of the true value. Fused, bridged and spiro systems have no single ring size and stand in the tables only.".into(),
+        caption: "Strain against ring size. Filled: ring systems of the case that are a single ring, sum of the ring levels. Open: measured unsubstituted cycloalkanes, measured minus strain-free sum. Bars are the expanded uncertainty U (95 %) of the true value. Fused, bridged and spiro systems have no single ring size and stand in the tables only.".into(),
         alternative: format!("Strain against ring size. {}.", told.join("; ")),
         drawing: Drawing::StrainPlot(StrainPlot { background, case }),
     }))
