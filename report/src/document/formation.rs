@@ -123,7 +123,7 @@ fn verdict(comparison: &Comparison, citations: &mut Citations) -> Option<Block> 
         Agreement::Disagrees => (
             NoteKind::Warning,
             opening.strong(format!(
-                "{higher} It counts until someone settles it by name in the case file."
+                "{higher} Until someone settles it by name in the case file, the highest value of the table counts."
             )),
         ),
         Agreement::Settled => {
