@@ -21,3 +21,6 @@ pub mod molecule;
 pub mod oxygen_balance;
 pub mod quantities;
 pub mod strain;
+
+/// Version of this crate, for reports that state what made their numbers.
+pub const VERSION: &str = env!("CARGO_PKG_VERSION");

@@ -36,6 +36,7 @@ pub(super) fn blocks() -> Vec<Block> {
             kind: NoteKind::Information,
             paragraphs: vec![
                 "u is a standard uncertainty. U is an expanded uncertainty: the true value is expected within ± U of the stated one in 95 of 100 such cases. It is not an interval for a new measurement, which has an error of its own.".into(),
+                "U = k·u. The coverage factor k differs from value to value, between 1.96 and 3.18: it is Student's quantile at the effective degrees of freedom (GUM, annex G), large where an estimate rests mostly on how far molecules of its kind stray from additivity, which is known from few of them.".into(),
                 "Numbers are rounded to their uncertainty: that to two significant digits, the value to the same digit. The calorie is the thermochemical one, 4.184 J. Atoms are numbered from 1 in the order of the structure as given.".into(),
             ],
         }),

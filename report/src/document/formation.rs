@@ -5,8 +5,12 @@ use super::block::{Block, Column, Note, NoteKind, Table};
 use super::inline::Inline;
 use super::report::heading;
 use super::rounding::{fixed, rounded, uncertainty};
+use super::strain::coverage_factor;
 use super::summary::basis_word;
 use crate::review::{Agreement, Comparison, Evidence, FormationEnthalpy};
+
+/// Measurements that the table of evidence lists: beyond the first dozen each moves the estimate by a few per cent of its own error.
+const EVIDENCE_SHOWN: usize = 12;
 
 pub(super) fn blocks(gas: &FormationEnthalpy, citations: &mut Citations) -> Vec<Block> {
     let mut blocks = vec![heading(4, "Enthalpy of formation, gas, 298.15 K")];
@@ -119,7 +123,7 @@ fn verdict(comparison: &Comparison, citations: &mut Citations) -> Option<Block> 
         Agreement::Disagrees => (
             NoteKind::Warning,
             opening.strong(format!(
-                "{higher} It counts until someone settles it by name in the case file."
+                "{higher} Until someone settles it by name in the case file, the highest value of the table counts."
             )),
         ),
         Agreement::Settled => {
@@ -127,7 +131,13 @@ fn verdict(comparison: &Comparison, citations: &mut Citations) -> Option<Block> 
             (
                 NoteKind::Information,
                 opening
-                    .text(format!("{higher} The case file settles it: "))
+                    .text(format!("{higher} The case file settles it and keeps the "))
+                    .strong(if comparison.keeps_estimate {
+                        "estimate"
+                    } else {
+                        "measured value"
+                    })
+                    .text(". ")
                     .emphasis(settled),
             )
         }
@@ -142,13 +152,14 @@ fn values(gas: &FormationEnthalpy) -> Block {
     let used = rounded(gas.quantity.value_kj_per_mol, gas.quantity.u_kj_per_mol);
     let estimate = rounded(gas.estimate.value_kj_per_mol, gas.estimate.u_kj_per_mol);
     Block::Table(Table {
-        caption: "The value that this report uses, and the additivity's estimate from all measurements that it may lean on. U (95 %) is for the true value.".into(),
+        caption: "The value that this report uses, and the additivity's estimate from all measurements that it may lean on. U (95 %) is for the true value, k = U/u.".into(),
         columns: vec![
             Column::words("Value"),
             Column::words("Basis"),
             Column::numbers("Enthalpy of formation, kJ/mol"),
             Column::numbers("u, kJ/mol"),
             Column::numbers("U, kJ/mol"),
+            Column::numbers("k"),
         ],
         rows: vec![
             vec![
@@ -157,13 +168,15 @@ fn values(gas: &FormationEnthalpy) -> Block {
                 Inline::new().strong(used.value),
                 used.uncertainty.into(),
                 uncertainty(gas.quantity.expanded_kj_per_mol).into(),
+                coverage_factor(gas.quantity).into(),
             ],
             vec![
                 "Estimate".into(),
                 "estimated".into(),
                 estimate.value.into(),
                 estimate.uncertainty.into(),
-                "—".into(),
+                uncertainty(gas.estimate.expanded_kj_per_mol).into(),
+                coverage_factor(gas.estimate).into(),
             ],
         ],
     })
@@ -173,6 +186,7 @@ fn evidence(gas: &FormationEnthalpy, citations: &mut Citations) -> Block {
     let rows = gas
         .evidence
         .iter()
+        .take(EVIDENCE_SHOWN)
         .map(|evidence: &Evidence| {
             let value = rounded(evidence.value_kj_per_mol, evidence.u_kj_per_mol);
             vec![
@@ -187,7 +201,11 @@ fn evidence(gas: &FormationEnthalpy, citations: &mut Citations) -> Block {
         .collect();
     Block::Table(Table {
         caption: format!(
-            "The measurements that the estimate leans on most; together they carry {} % of the absolute weight. A weight says how far the estimate moves, in kJ/mol, when the measured value moves by 1 kJ/mol; it may be negative.",
+            "The measurements that the estimate leans on most. A weight says how far the estimate moves, in kJ/mol, when the measured value moves by 1 kJ/mol; it may be negative. {} carry {} % of the absolute weight; report.json lists them all.",
+            match gas.evidence.len().saturating_sub(EVIDENCE_SHOWN) {
+                0 => "Those listed".to_owned(),
+                more => format!("Those listed and {more} more"),
+            },
             fixed(100.0 * gas.evidence_share, 0)
         )
         .into(),

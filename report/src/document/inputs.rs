@@ -5,27 +5,33 @@ use std::fmt::Write as _;
 use serde::Serialize;
 use sha2::{Digest as _, Sha256};
 
+use super::entry::Entry;
 use crate::review::{CheckValue, SubstanceReview};
 
 /// Everything that a report is made from.
-#[derive(Clone, Copy, Debug)]
-pub struct Inputs<'a> {
+#[derive(Clone, Debug, Default)]
+pub struct Inputs {
     /// The head of the case file.
-    pub header: &'a Header,
-    /// What the case file says of the substances besides their structure.
-    pub particulars: &'a [Particulars],
-    /// What was found for each substance.
-    pub reviews: &'a [SubstanceReview],
+    pub header: Header,
+    /// The substances in the order of the case file.
+    pub entries: Vec<Entry>,
     /// The published values, recomputed.
-    pub checks: &'a [CheckValue],
+    pub checks: Vec<CheckValue>,
     /// Measured monocycles, the background of the plot.
-    pub monocycles: &'a [RingReference],
-    /// Factor from standard to expanded uncertainty (95 %) of an estimate, from the fitted distribution.
-    pub coverage_factor: f64,
+    pub monocycles: Vec<RingReference>,
     /// Digests of the case file and of the tables.
-    pub digests: &'a [Digest],
+    pub digests: Vec<Digest>,
     /// Names and versions of the programs.
-    pub versions: &'a [(String, String)],
+    pub versions: Vec<(String, String)>,
+}
+
+impl Inputs {
+    /// What was found for the substances that could be reviewed.
+    pub fn reviews(&self) -> impl Iterator<Item = &SubstanceReview> {
+        self.entries
+            .iter()
+            .filter_map(|entry| entry.finding.as_ref().ok())
+    }
 }
 
 /// The head of a case file.
@@ -45,17 +51,6 @@ pub struct Header {
     pub notes: Option<String>,
 }
 
-/// What the case file says of a substance besides its structure.
-#[derive(Clone, Debug, Default, Serialize)]
-pub struct Particulars {
-    /// Name of the substance as in its review.
-    pub substance: String,
-    /// Named facts with their units: state, amount.
-    pub facts: Vec<(String, String)>,
-    /// Free notes, Markdown.
-    pub notes: Option<String>,
-}
-
 /// The strain of a measured monocycle, measured minus strain-free.
 #[derive(Clone, Debug, Serialize)]
 pub struct RingReference {
@@ -63,8 +58,8 @@ pub struct RingReference {
     pub size: usize,
     /// Strain, kJ/mol.
     pub strain_kj_per_mol: f64,
-    /// Standard uncertainty, kJ/mol.
-    pub u_kj_per_mol: f64,
+    /// Expanded uncertainty (95 %), kJ/mol.
+    pub expanded_kj_per_mol: f64,
     /// Bibliography key of the enthalpy of formation.
     pub source: String,
 }

@@ -27,7 +27,7 @@ pub(super) fn bibliography(citations: &Citations) -> Vec<Block> {
     ]
 }
 
-pub(super) fn blocks(inputs: &Inputs<'_>) -> Vec<Block> {
+pub(super) fn blocks(inputs: &Inputs) -> Vec<Block> {
     vec![
         heading(2, "Provenance"),
         "The same case file, tables and program give this report again, byte for byte.".into(),

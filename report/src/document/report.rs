@@ -9,9 +9,10 @@ use super::{blocks_from_markdown, cautions, checks, provenance, substance, summa
 /// The strain report of a case.
 ///
 /// The same inputs give the same document: no clock, no machine, no chance comes into it.
-pub fn report(inputs: &Inputs<'_>) -> Document {
+pub fn report(inputs: &Inputs) -> Document {
     let mut citations = Citations::new(Bibliography::of_project());
     let mut blocks = vec![front(inputs)];
+    blocks.extend(checks::warning(&inputs.checks));
     blocks.extend(cautions::blocks());
     blocks.extend(summary::blocks(inputs));
     if let Some(notes) = &inputs.header.notes {
@@ -19,10 +20,10 @@ pub fn report(inputs: &Inputs<'_>) -> Document {
         blocks.extend(blocks_from_markdown(notes));
     }
     blocks.push(heading(2, "Substances"));
-    for (index, review) in inputs.reviews.iter().enumerate() {
-        blocks.extend(substance::blocks(index, review, inputs, &mut citations));
+    for (index, entry) in inputs.entries.iter().enumerate() {
+        blocks.extend(substance::blocks(index, entry, &mut citations));
     }
-    blocks.extend(checks::blocks(inputs.checks, &mut citations));
+    blocks.extend(checks::blocks(&inputs.checks, &mut citations));
     blocks.extend(sign_off());
     blocks.extend(provenance::bibliography(&citations));
     blocks.extend(provenance::blocks(inputs));
@@ -55,8 +56,8 @@ pub(super) fn particulars_table(
     })
 }
 
-fn front(inputs: &Inputs<'_>) -> Block {
-    let header = inputs.header;
+fn front(inputs: &Inputs) -> Block {
+    let header = &inputs.header;
     let rows = [
         ("Reference", &header.reference),
         ("Revision", &header.revision),

@@ -1,35 +1,37 @@
 //! The strain of a substance: per ring system and in total.
 
-use tautring_core::quantities::KJ_PER_KCAL;
+use tautring_core::quantities::{MolarEnergy, MolarMass};
 
 use super::block::{Block, Column, Table};
 use super::inline::Inline;
 use super::report::heading;
-use super::rounding::{rounded, uncertainty};
-use crate::review::{RingStrain, SubstanceReview};
+use super::rounding::{fixed, rounded, uncertainty};
+use crate::review::{Quantity, SubstanceReview};
 
-pub(super) fn blocks(review: &SubstanceReview, k: f64) -> Vec<Block> {
+pub(super) fn blocks(review: &SubstanceReview) -> Vec<Block> {
     let strain = &review.strain;
     let mut blocks = vec![
         heading(4, "Strain"),
         Block::Paragraph(
             Inline::from("A strain energy means nothing without its convention. The one here: ")
                 .emphasis(strain.convention)
-                .text("."),
+                .text("; the zero is a hypothetical molecule of the same groups without rings."),
         ),
     ];
     if strain.ring_systems.is_empty() {
         blocks.push("The molecule has no ring that counts as strained by this convention: aromatic rings do not, and there is no other.".into());
+        return blocks;
     }
-    blocks.push(table(review, k));
-    if let Some(other) = strain.measured_minus_strain_free {
+    blocks.push(table(review));
+    if let Some(measured) = strain.measured_minus_strain_free {
+        let [sum, measured] = [strain.quantity, measured]
+            .map(|q| rounded(q.value_kj_per_mol, q.expanded_kj_per_mol).interval());
         blocks.push(Block::Paragraph(
-            format!(
-                "From the measured enthalpy of formation: measured minus strain-free sum is {} kJ/mol (± U, 95 %, for the true value), where the table gives {} kJ/mol.",
-                rounded(other.value_kj_per_mol, k * other.u_kj_per_mol).interval(),
-                rounded(strain.quantity.value_kj_per_mol, k * strain.quantity.u_kj_per_mol).interval()
-            )
-            .into(),
+            Inline::from("Two numbers for one strain, each ± U (95 %): ")
+                .strong(format!("{sum} kJ/mol"))
+                .text(" is the sum of the ring levels, in the table and the summary; ")
+                .strong(format!("{measured} kJ/mol"))
+                .text(" is the enthalpy of formation that this report uses, a measured one, minus the strain-free sum, and holds also what is peculiar to this molecule alone."),
         ));
     }
     blocks
@@ -41,38 +43,33 @@ pub(super) fn atom_numbers(atoms: &[usize]) -> String {
     numbers.join(", ")
 }
 
-fn table(review: &SubstanceReview, k: f64) -> Block {
+fn table(review: &SubstanceReview) -> Block {
     let strain = &review.strain;
+    let mass = MolarMass::from_g_per_mol(review.molar_mass_g_per_mol).ok();
+    let numbers = |system: &[usize]| -> Inline { atom_numbers(system).into() };
     let mut rows: Vec<_> = strain
         .ring_systems
         .iter()
-        .map(|system| row(system, k))
+        .map(|system| {
+            let sizes: Vec<_> = system.sizes.iter().map(ToString::to_string).collect();
+            row(
+                [numbers(&system.atoms), sizes.join(", ").into()],
+                system.quantity,
+                mass,
+            )
+        })
         .collect();
-    let value = rounded(
-        strain.quantity.value_kj_per_mol,
-        strain.quantity.u_kj_per_mol,
-    );
-    let per_gram = rounded(strain.j_per_g, k * strain.u_j_per_g);
-    let expanded = k * strain.quantity.u_kj_per_mol;
-    rows.push(vec![
-        Inline::new().strong("Total"),
-        Inline::from("—"),
-        Inline::new().strong(value.value),
-        value.uncertainty.into(),
-        uncertainty(expanded).into(),
-        rounded(strain.value_kcal_per_mol, expanded / KJ_PER_KCAL)
-            .interval()
-            .into(),
-        per_gram.interval().into(),
-    ]);
+    let total = [Inline::new().strong("Total"), Inline::from("—")];
+    rows.push(row(total, strain.quantity, mass));
     Block::Table(Table {
-        caption: "Strain per ring system and in total, gas phase, 298.15 K. U (95 %) is for the true value. Ring systems share uncertainty, so the u of the total is not the root of the sum of squares.".into(),
+        caption: "Strain per ring system and in total, gas phase, 298.15 K. U (95 %) is for the true value, k = U/u. Ring systems share uncertainty, so the u of the total is not the root of the sum of squares.".into(),
         columns: vec![
             Column::words("Ring system, atoms"),
             Column::words("Ring sizes"),
             Column::numbers("Strain, kJ/mol"),
             Column::numbers("u, kJ/mol"),
             Column::numbers("U, kJ/mol"),
+            Column::numbers("k"),
             Column::numbers("Strain ± U, kcal/mol"),
             Column::numbers("Strain ± U, J/g"),
         ],
@@ -80,23 +77,32 @@ fn table(review: &SubstanceReview, k: f64) -> Block {
     })
 }
 
-fn row(system: &RingStrain, k: f64) -> Vec<Inline> {
-    let quantity = system.quantity;
+fn row(name: [Inline; 2], quantity: Quantity, mass: Option<MolarMass>) -> Vec<Inline> {
     let value = rounded(quantity.value_kj_per_mol, quantity.u_kj_per_mol);
-    let expanded = k * quantity.u_kj_per_mol;
-    let sizes: Vec<_> = system.sizes.iter().map(ToString::to_string).collect();
-    vec![
-        atom_numbers(&system.atoms).into(),
-        sizes.join(", ").into(),
+    let [energy, expanded] =
+        [quantity.value_kj_per_mol, quantity.expanded_kj_per_mol].map(MolarEnergy::from_kj_per_mol);
+    let per_gram = mass.map_or_else(
+        || "—".to_owned(),
+        |mass| {
+            let [energy, expanded] = [energy, expanded].map(|e| (e / mass).j_per_g());
+            rounded(energy, expanded).interval()
+        },
+    );
+    let mut cells = Vec::from(name);
+    cells.extend([
         value.value.into(),
         value.uncertainty.into(),
-        uncertainty(expanded).into(),
-        rounded(
-            quantity.value_kj_per_mol / KJ_PER_KCAL,
-            expanded / KJ_PER_KCAL,
-        )
-        .interval()
-        .into(),
-        "—".into(),
-    ]
+        uncertainty(quantity.expanded_kj_per_mol).into(),
+        coverage_factor(quantity).into(),
+        rounded(energy.kcal_per_mol(), expanded.kcal_per_mol())
+            .interval()
+            .into(),
+        per_gram.into(),
+    ]);
+    cells
+}
+
+/// The coverage factor k of a value, U/u.
+pub(super) fn coverage_factor(quantity: Quantity) -> String {
+    fixed(quantity.expanded_kj_per_mol / quantity.u_kj_per_mol, 2)
 }

@@ -1,54 +1,103 @@
 //! One substance: what it is, how it looks, and then what was found.
 
 use super::bibliography::Citations;
-use super::block::{Block, Figure};
+use super::block::{Block, Column, Figure, Note, NoteKind, Table};
 use super::drawing::{Drawing, StrainedSystem, StructureDrawing};
+use super::entry::{Entry, Particulars};
 use super::inline::{Inline, subscripted};
-use super::inputs::{Inputs, Particulars};
 use super::report::{heading, particulars_table};
 use super::rounding::{fixed, rounded};
 use super::{blocks_from_markdown, formation, strain};
-use crate::review::SubstanceReview;
+use crate::review::{SubstanceReview, UNSTATED_KJ_PER_MOL};
 
 /// Strain of a ring system from which on its bonds are marked in the drawing, kJ/mol: cyclohexane stays unmarked, cyclopentane does not.
 const MARKED_FROM_KJ_PER_MOL: f64 = 20.0;
 
-pub(super) fn blocks(
-    index: usize,
-    review: &SubstanceReview,
-    inputs: &Inputs<'_>,
-    citations: &mut Citations,
-) -> Vec<Block> {
-    let particulars = inputs
-        .particulars
-        .iter()
-        .find(|particulars| particulars.substance == review.name);
-    let mut blocks = vec![
-        heading(3, review.name.as_str()),
-        figure(index, review, inputs.coverage_factor),
-        identity(review, particulars),
-    ];
-    if let Some(notes) = particulars.and_then(|particulars| particulars.notes.as_deref()) {
+pub(super) fn blocks(index: usize, entry: &Entry, citations: &mut Citations) -> Vec<Block> {
+    let particulars = &entry.particulars;
+    let mut blocks = vec![heading(3, particulars.substance.as_str())];
+    match &entry.finding {
+        Ok(review) => {
+            blocks.push(figure(index, review));
+            blocks.push(identity(particulars, Some(review)));
+        }
+        Err(reason) => {
+            blocks.push(Block::Note(Note {
+                kind: NoteKind::Warning,
+                paragraphs: vec![
+                    Inline::new()
+                        .strong("This substance could not be reviewed: ")
+                        .text(reason.as_str())
+                        .text(". Nothing in this report speaks of its hazard."),
+                ],
+            }));
+            blocks.push(identity(particulars, None));
+        }
+    }
+    if let Some(notes) = &particulars.notes {
         blocks.push(heading(4, "Notes"));
         blocks.extend(blocks_from_markdown(notes));
     }
-    blocks.extend(formation::blocks(&review.gas, citations));
-    blocks.extend(strain::blocks(review, inputs.coverage_factor));
-    if !review.flags.is_empty() {
-        blocks.push(heading(4, "Flags"));
-        blocks.push(Block::List {
-            ordered: false,
-            items: review
-                .flags
-                .iter()
-                .map(|flag| flag.as_str().into())
-                .collect(),
-        });
+    blocks.extend(stated(particulars));
+    if let Ok(review) = &entry.finding {
+        blocks.extend(formation::blocks(&review.gas, citations));
+        blocks.extend(strain::blocks(review));
+        if !review.flags.is_empty() {
+            blocks.push(heading(4, "Flags"));
+            blocks.push(Block::List {
+                ordered: false,
+                items: review
+                    .flags
+                    .iter()
+                    .map(|flag| flag.as_str().into())
+                    .collect(),
+            });
+        }
     }
     blocks
 }
 
-fn figure(index: usize, review: &SubstanceReview, k: f64) -> Block {
+/// Measured values in the words of the case file, whether the review can compare them or not.
+fn stated(particulars: &Particulars) -> Vec<Block> {
+    if particulars.measured.is_empty() {
+        return Vec::new();
+    }
+    let rows = particulars
+        .measured
+        .iter()
+        .map(|stated| {
+            vec![
+                Inline::from(stated.quantity.as_str()),
+                stated.value.as_str().into(),
+                stated.uncertainty.as_deref().unwrap_or("not stated").into(),
+                stated.source.as_str().into(),
+                stated.note.as_deref().unwrap_or("—").into(),
+                if stated.compared { "yes, below" } else { "no" }.into(),
+            ]
+        })
+        .collect();
+    vec![
+        heading(4, "Measured values of the case"),
+        Block::Table(Table {
+            caption: format!(
+                "Measured values as the case file states them. Gas-phase enthalpies of formation are compared with the estimate; one without a stated uncertainty counts with u = {} kJ/mol, that of a handbook value. The others are shown only.",
+                fixed(UNSTATED_KJ_PER_MOL, 1)
+            )
+            .into(),
+            columns: vec![
+                Column::words("Quantity"),
+                Column::numbers("Value"),
+                Column::numbers("Uncertainty"),
+                Column::words("Source"),
+                Column::words("Remark"),
+                Column::words("Compared"),
+            ],
+            rows,
+        }),
+    ]
+}
+
+fn figure(index: usize, review: &SubstanceReview) -> Block {
     let strained: Vec<_> = review
         .strain
         .ring_systems
@@ -60,7 +109,7 @@ fn figure(index: usize, review: &SubstanceReview, k: f64) -> Block {
                 "{} kJ/mol",
                 rounded(
                     system.quantity.value_kj_per_mol,
-                    k * system.quantity.u_kj_per_mol
+                    system.quantity.expanded_kj_per_mol
                 )
                 .value
             ),
@@ -111,32 +160,32 @@ fn figure(index: usize, review: &SubstanceReview, k: f64) -> Block {
     })
 }
 
-fn identity(review: &SubstanceReview, particulars: Option<&Particulars>) -> Block {
-    let mut rows = vec![
-        (
-            "Structure as given",
-            Inline::new().code(review.input.as_str()),
-        ),
-        ("Formula", subscripted(&review.formula).into()),
-        (
-            "Molar mass",
-            format!("{} g/mol", fixed(review.molar_mass_g_per_mol, 2)).into(),
-        ),
-        (
-            "Oxygen balance to CO₂, H₂O, N₂, SO₂ and HX",
-            format!("{} %", fixed(review.oxygen_balance_percent, 1)).into(),
-        ),
-    ];
-    if let Some(particulars) = particulars {
-        rows.extend(
-            particulars
-                .facts
-                .iter()
-                .map(|(name, fact)| (name.as_str(), fact.as_str().into())),
-        );
+fn identity(particulars: &Particulars, review: Option<&SubstanceReview>) -> Block {
+    let mut rows = vec![(
+        "Structure as given",
+        Inline::new().code(particulars.structure.as_str()),
+    )];
+    if let Some(review) = review {
+        rows.extend([
+            ("Formula", subscripted(&review.formula).into()),
+            (
+                "Molar mass",
+                format!("{} g/mol", fixed(review.molar_mass_g_per_mol, 2)).into(),
+            ),
+            (
+                "Oxygen balance to CO₂, H₂O, N₂, SO₂ and HX",
+                format!("{} %", fixed(review.oxygen_balance_percent, 1)).into(),
+            ),
+        ]);
     }
+    rows.extend(
+        particulars
+            .facts
+            .iter()
+            .map(|(name, fact)| (name.as_str(), fact.as_str().into())),
+    );
     particulars_table(
-        format!("What {} is.", review.name).into(),
+        format!("What {} is.", particulars.substance).into(),
         ["Property", "Value"],
         rows,
     )

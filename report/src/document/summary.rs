@@ -7,55 +7,66 @@ use super::drawing::{Drawing, PlottedStrain, StrainPlot};
 use super::inline::{Inline, subscripted};
 use super::inputs::Inputs;
 use super::report::heading;
-use super::rounding::{fixed, rounded};
-use crate::review::{Basis, SubstanceReview};
+use super::rounding::{Rounded, rounded};
+use crate::review::Basis;
 
-pub(super) fn blocks(inputs: &Inputs<'_>) -> Vec<Block> {
+pub(super) fn blocks(inputs: &Inputs) -> Vec<Block> {
     let mut blocks = vec![heading(2, "Summary"), table(inputs)];
-    blocks.extend(flags(inputs.reviews));
+    blocks.extend(not_reviewed(inputs));
+    blocks.extend(flags(inputs));
     blocks.extend(plot(inputs));
     blocks
 }
 
-fn table(inputs: &Inputs<'_>) -> Block {
-    let k = inputs.coverage_factor;
+fn table(inputs: &Inputs) -> Block {
     let rows = inputs
-        .reviews
+        .entries
         .iter()
-        .map(|review| {
+        .map(|entry| {
+            let Ok(review) = &entry.finding else {
+                let mut row = vec![Inline::from(entry.particulars.substance.as_str())];
+                row.extend((0..7).map(|_| Inline::from("—")));
+                row.push("not reviewed".into());
+                return row;
+            };
             let strain = &review.strain;
-            let expanded = k * strain.quantity.u_kj_per_mol;
+            let expanded = strain.quantity.expanded_kj_per_mol;
             let gas = &review.gas;
+            let of_rings = |interval: Rounded| -> Inline {
+                if strain.ring_systems.is_empty() {
+                    "no ring".into()
+                } else {
+                    interval.interval().into()
+                }
+            };
             vec![
                 Inline::from(review.name.as_str()),
                 subscripted(&review.formula).into(),
-                rounded(strain.quantity.value_kj_per_mol, expanded)
-                    .interval()
-                    .into(),
-                rounded(strain.value_kcal_per_mol, expanded / KJ_PER_KCAL)
-                    .interval()
-                    .into(),
-                rounded(strain.j_per_g, k * strain.u_j_per_g)
-                    .interval()
-                    .into(),
-                rounded(gas.quantity.value_kj_per_mol, gas.quantity.expanded_kj_per_mol)
-                    .interval()
-                    .into(),
+                of_rings(rounded(strain.quantity.value_kj_per_mol, expanded)),
+                strain.measured_minus_strain_free.map_or_else(
+                    || "—".into(),
+                    |q| of_rings(rounded(q.value_kj_per_mol, q.expanded_kj_per_mol)),
+                ),
+                of_rings(rounded(strain.value_kcal_per_mol, expanded / KJ_PER_KCAL)),
+                of_rings(rounded(strain.j_per_g, strain.expanded_j_per_g)),
+                rounded(
+                    gas.quantity.value_kj_per_mol,
+                    gas.quantity.expanded_kj_per_mol,
+                )
+                .interval()
+                .into(),
                 basis_word(gas.basis).into(),
                 review.flags.len().to_string().into(),
             ]
         })
         .collect();
     Block::Table(Table {
-        caption: format!(
-            "Strain and gas-phase enthalpy of formation at 298.15 K, each with its expanded uncertainty U (95 %, for the true value; k = {} for estimates).",
-            fixed(k, 2)
-        )
-        .into(),
+        caption: "Strain (sum of the ring levels; beside it, where a measured enthalpy of formation is used, that minus the strain-free sum) and gas-phase enthalpy of formation at 298.15 K, each with its expanded uncertainty U (95 %, for the true value). \"No ring\" means none that counts as strained: aromatic rings do not.".into(),
         columns: vec![
             Column::words("Substance"),
             Column::words("Formula"),
             Column::numbers("Strain ± U, kJ/mol"),
+            Column::numbers("From measured enthalpy ± U, kJ/mol"),
             Column::numbers("Strain ± U, kcal/mol"),
             Column::numbers("Strain ± U, J/g"),
             Column::numbers("Enthalpy of formation ± U, kJ/mol"),
@@ -73,9 +84,25 @@ pub(super) const fn basis_word(basis: Basis) -> &'static str {
     }
 }
 
-fn flags(reviews: &[SubstanceReview]) -> Option<Block> {
-    let paragraphs: Vec<_> = reviews
+fn not_reviewed(inputs: &Inputs) -> Option<Block> {
+    let paragraphs: Vec<_> = inputs
+        .entries
         .iter()
+        .filter_map(|entry| {
+            let reason = entry.finding.as_ref().err()?;
+            let name = format!("{} could not be reviewed: ", entry.particulars.substance);
+            Some(Inline::new().strong(name).text(reason.as_str()))
+        })
+        .collect();
+    (!paragraphs.is_empty()).then_some(Block::Note(Note {
+        kind: NoteKind::Warning,
+        paragraphs,
+    }))
+}
+
+fn flags(inputs: &Inputs) -> Option<Block> {
+    let paragraphs: Vec<_> = inputs
+        .reviews()
         .flat_map(|review| {
             review.flags.iter().map(|flag| {
                 Inline::new()
@@ -91,21 +118,19 @@ fn flags(reviews: &[SubstanceReview]) -> Option<Block> {
 }
 
 /// The plot, when a substance has a ring system of one ring: only there is "the ring size" one number.
-fn plot(inputs: &Inputs<'_>) -> Option<Block> {
-    let k = inputs.coverage_factor;
+fn plot(inputs: &Inputs) -> Option<Block> {
     let case: Vec<_> = inputs
-        .reviews
-        .iter()
+        .reviews()
         .flat_map(|review| {
             review
                 .strain
                 .ring_systems
                 .iter()
-                .filter_map(move |system| match system.sizes[..] {
+                .filter_map(|system| match system.sizes[..] {
                     [size] => Some(PlottedStrain {
                         size,
                         strain_kj_per_mol: system.quantity.value_kj_per_mol,
-                        expanded_kj_per_mol: k * system.quantity.u_kj_per_mol,
+                        expanded_kj_per_mol: system.quantity.expanded_kj_per_mol,
                         label: review.name.clone(),
                     }),
                     _ => None,
@@ -121,7 +146,7 @@ fn plot(inputs: &Inputs<'_>) -> Option<Block> {
         .map(|ring| PlottedStrain {
             size: ring.size,
             strain_kj_per_mol: ring.strain_kj_per_mol,
-            expanded_kj_per_mol: k * ring.u_kj_per_mol,
+            expanded_kj_per_mol: ring.expanded_kj_per_mol,
             label: String::new(),
         })
         .collect();
@@ -139,7 +164,7 @@ fn plot(inputs: &Inputs<'_>) -> Option<Block> {
         .collect();
     Some(Block::Figure(Figure {
         id: "strain-by-ring-size".to_owned(),
-        caption: "Strain of the ring systems that are a single ring (filled) among the measured unsubstituted cycloalkanes (open), against ring size. Bars are the expanded uncertainty U (95 %) of the true value. Fused, bridged and spiro systems have no single ring size and stand in the tables only.".into(),
+        caption: "Strain against ring size. Filled: ring systems of the case that are a single ring, sum of the ring levels. Open: measured unsubstituted cycloalkanes, measured minus strain-free sum. Bars are the expanded uncertainty U (95 %) of the true value. Fused, bridged and spiro systems have no single ring size and stand in the tables only.".into(),
         alternative: format!("Strain against ring size. {}.", told.join("; ")),
         drawing: Drawing::StrainPlot(StrainPlot { background, case }),
     }))

@@ -19,7 +19,7 @@ use crate::document::{Document, Inputs};
 /// [`RenderError`]; when a file cannot be written, the folder holds what it held before.
 pub fn write_all(
     document: &Document,
-    inputs: &Inputs<'_>,
+    inputs: &Inputs,
     folder: &Path,
 ) -> Result<Vec<PathBuf>, RenderError> {
     let figure_folder = folder.join(markdown::FIGURES);

@@ -6,7 +6,7 @@ use super::error::RenderError;
 use crate::document::Inputs;
 use crate::review::SubstanceReview;
 
-/// The results of one substance under the keys that other programs rely on.
+/// The results of one substance under the keys that other programs rely on, and more beside them.
 ///
 /// Indices of atoms start at 0 and follow the order of the input. Null stands for what is not computed. Every number has all its digits;
 /// rounding is for readers.
@@ -19,13 +19,6 @@ pub fn contract(review: &SubstanceReview) -> Value {
         .iter()
         .map(|atoms| json!({ "atoms": atoms, "size": atoms.len() }))
         .collect();
-    let evidence: Vec<_> = gas
-        .evidence
-        .iter()
-        .map(|evidence| {
-            json!({ "molecule": evidence.molecule, "weight": evidence.weight, "source": evidence.source })
-        })
-        .collect();
     json!({
         "input": review.input,
         "formula": review.formula,
@@ -34,17 +27,15 @@ pub fn contract(review: &SubstanceReview) -> Value {
             "gas": {
                 "value_kj_per_mol": gas.quantity.value_kj_per_mol,
                 "u_kj_per_mol": gas.quantity.u_kj_per_mol,
+                "expanded_kj_per_mol": gas.quantity.expanded_kj_per_mol,
                 "basis": gas.basis,
+                "estimate": gas.estimate,
+                "comparisons": gas.comparisons,
             },
             "liquid": not_computed,
             "solid": not_computed,
         },
-        "strain": {
-            "value_kj_per_mol": strain.quantity.value_kj_per_mol,
-            "u_kj_per_mol": strain.quantity.u_kj_per_mol,
-            "j_per_g": strain.j_per_g,
-            "convention": strain.convention,
-        },
+        "strain": strain,
         "rings": rings,
         "account": {
             "bend_kj_per_mol": null,
@@ -61,27 +52,32 @@ pub fn contract(review: &SubstanceReview) -> Value {
             "products": null,
         },
         "oxygen_balance_percent": review.oxygen_balance_percent,
-        "evidence": evidence,
+        "evidence": gas.evidence,
+        "evidence_share": gas.evidence_share,
         "flags": review.flags,
     })
 }
 
 /// `report.json`: inputs, digests, versions and every result, in a fixed order of keys.
 ///
-/// Each substance holds the keys of [`contract`], and under `details` everything else that was found.
+/// Each substance holds what the case file states and the keys of [`contract`], or `error` where it could not be reviewed.
 ///
 /// # Errors
 /// [`RenderError::Json`].
-pub fn json(inputs: &Inputs<'_>) -> Result<String, RenderError> {
+pub fn json(inputs: &Inputs) -> Result<String, RenderError> {
     let fail = |source| RenderError::Json { source };
     let mut substances = Vec::new();
-    for review in inputs.reviews {
-        let mut keys = contract(review);
-        keys["name"] = json!(review.name);
-        keys["details"] = json!({
-            "gas": serde_json::to_value(&review.gas).map_err(fail)?,
-            "strain": serde_json::to_value(&review.strain).map_err(fail)?,
-        });
+    for entry in &inputs.entries {
+        let particulars = &entry.particulars;
+        let mut keys = json!({ "id": particulars.id, "name": particulars.substance });
+        let found = match &entry.finding {
+            Ok(review) => contract(review),
+            Err(reason) => json!({ "input": particulars.structure, "error": reason }),
+        };
+        if let (Some(keys), Value::Object(found)) = (keys.as_object_mut(), found) {
+            keys.extend(found);
+        }
+        keys["stated"] = serde_json::to_value(particulars).map_err(fail)?;
         substances.push(keys);
     }
     let versions: Value = inputs
@@ -97,16 +93,15 @@ pub fn json(inputs: &Inputs<'_>) -> Result<String, RenderError> {
             "atom_indices": "from 0, in the order of the input",
             "u": "standard uncertainty",
             "expanded": "expanded uncertainty, 95 %, for the true value",
-            "coverage_factor_of_estimates": inputs.coverage_factor,
+            "coverage_factor": "expanded / u, of each value its own: Student's quantile at the effective degrees of freedom",
             "temperature_k": 298.15,
         },
         "versions": versions,
-        "digests": serde_json::to_value(inputs.digests).map_err(fail)?,
-        "case": serde_json::to_value(inputs.header).map_err(fail)?,
-        "particulars": serde_json::to_value(inputs.particulars).map_err(fail)?,
+        "digests": serde_json::to_value(&inputs.digests).map_err(fail)?,
+        "case": serde_json::to_value(&inputs.header).map_err(fail)?,
         "substances": substances,
-        "checks": serde_json::to_value(inputs.checks).map_err(fail)?,
-        "monocycles": serde_json::to_value(inputs.monocycles).map_err(fail)?,
+        "checks": serde_json::to_value(&inputs.checks).map_err(fail)?,
+        "monocycles": serde_json::to_value(&inputs.monocycles).map_err(fail)?,
     });
     let mut text = serde_json::to_string_pretty(&report).map_err(fail)?;
     text.push('\n');

@@ -3,7 +3,7 @@
 use std::fs;
 
 use super::{contract, html, json, markdown, write_all};
-use crate::document::{Digest, Document, Header, Inputs, Particulars, RingReference, report};
+use crate::document::{Digest, Entry, Header, Inputs, Particulars, RingReference, Stated, report};
 use crate::review::{
     Agreement, Basis, CheckOutcome, CheckValue, Comparison, Evidence, FormationEnthalpy,
     MeasuredEnthalpy, Quantity, RingStrain, Strain, SubstanceReview,
@@ -14,6 +14,7 @@ fn quantity(value_kj_per_mol: f64, u_kj_per_mol: f64) -> Quantity {
     Quantity {
         value_kj_per_mol,
         u_kj_per_mol,
+        expanded_kj_per_mol: 2.5 * u_kj_per_mol,
     }
 }
 
@@ -32,10 +33,11 @@ fn comparison(measured: f64, agreement: Agreement, from_case: bool) -> Compariso
         },
         blind,
         difference_kj_per_mol: measured - blind.value_kj_per_mol,
-        expanded_kj_per_mol: 3.9,
+        expanded_difference_kj_per_mol: 3.9,
         agreement,
         settled_by: (agreement == Agreement::Settled)
             .then(|| "The safety office: wrong sample.".to_owned()),
+        keeps_estimate: true,
     }
 }
 
@@ -63,7 +65,6 @@ fn review(name: &str, smiles: &str, comparisons: Vec<Comparison>) -> SubstanceRe
             } else {
                 Basis::Measured
             },
-            expanded_kj_per_mol: 0.6,
             estimate: quantity(53.9, 0.7),
             comparisons,
             evidence: vec![Evidence {
@@ -81,6 +82,7 @@ fn review(name: &str, smiles: &str, comparisons: Vec<Comparison>) -> SubstanceRe
             value_kcal_per_mol: 27.63,
             j_per_g: 2747.0,
             u_j_per_g: 31.0,
+            expanded_j_per_g: 77.0,
             convention: "group increments, sum of the ring levels",
             measured_minus_strain_free: Some(quantity(115.2, 1.0)),
             ring_systems: vec![RingStrain {
@@ -95,94 +97,80 @@ fn review(name: &str, smiles: &str, comparisons: Vec<Comparison>) -> SubstanceRe
     }
 }
 
-struct Sample {
-    header: Header,
-    particulars: Vec<Particulars>,
-    reviews: Vec<SubstanceReview>,
-    checks: Vec<CheckValue>,
-    monocycles: Vec<RingReference>,
-    digests: Vec<Digest>,
-    versions: Vec<(String, String)>,
-}
-
-impl Sample {
-    fn new() -> Self {
-        Self {
-            header: Header {
-                title: "Ring <openings> & others".to_owned(),
-                reference: "T-1".to_owned(),
-                date: "2026-03-01".to_owned(),
-                author: "A. Writer".to_owned(),
-                revision: "2".to_owned(),
-                notes: Some(
-                    "# Loud\n\n<script>alert(1)</script>\n\n[x](javascript:alert(1))".to_owned(),
-                ),
-            },
-            particulars: vec![Particulars {
-                substance: "Cyclopropane".to_owned(),
-                facts: vec![("Amount".to_owned(), "1.2 kg".to_owned())],
-                notes: Some("Kept *cold*.".to_owned()),
+fn sample() -> Inputs {
+    let cyclopropane = review(
+        "Cyclopropane",
+        "C1CC1",
+        vec![
+            comparison(53.5, Agreement::Agrees, false),
+            comparison(70.0, Agreement::Disagrees, true),
+            comparison(20.0, Agreement::Settled, true),
+        ],
+    );
+    let cubane = review("Cubane", "C12C3C4C1C5C2C3C45", Vec::new());
+    let entry = |name: &str, finding| Entry {
+        particulars: Particulars {
+            substance: name.to_owned(),
+            facts: vec![("Amount".to_owned(), "1.2 kg".to_owned())],
+            measured: vec![Stated {
+                quantity: "heat released on decomposition".to_owned(),
+                value: "1200 J/g".to_owned(),
+                uncertainty: None,
+                source: "Laboratory".to_owned(),
+                note: None,
+                compared: false,
             }],
-            reviews: vec![
-                review(
-                    "Cyclopropane",
-                    "C1CC1",
-                    vec![
-                        comparison(53.5, Agreement::Agrees, false),
-                        comparison(70.0, Agreement::Disagrees, true),
-                        comparison(20.0, Agreement::Settled, true),
-                    ],
-                ),
-                review("Cubane", "C12C3C4C1C5C2C3C45", Vec::new()),
-            ],
-            checks: vec![CheckValue {
-                id: "strain-cyclopropane".to_owned(),
-                quantity: "strain energy".to_owned(),
-                subject: "C1CC1".to_owned(),
-                published: 115.0,
-                unit: "kJ/mol".to_owned(),
-                computed: 117.9,
-                tolerance: 2.5,
-                tolerance_reason: "rounded to the nearest 5".to_owned(),
-                source: "goldbook-s06037".to_owned(),
-                source_seen: "yes".to_owned(),
-                outcome: CheckOutcome::Off,
-            }],
-            monocycles: vec![RingReference {
-                size: 4,
-                strain_kj_per_mol: 110.0,
-                u_kj_per_mol: 0.5,
-                source: "crc2014".to_owned(),
-            }],
-            digests: vec![Digest::new("case file", b"title")],
-            versions: vec![("tautring".to_owned(), "0.1.0".to_owned())],
-        }
-    }
-
-    fn inputs(&self) -> Inputs<'_> {
-        Inputs {
-            header: &self.header,
-            particulars: &self.particulars,
-            reviews: &self.reviews,
-            checks: &self.checks,
-            monocycles: &self.monocycles,
-            coverage_factor: 2.1,
-            digests: &self.digests,
-            versions: &self.versions,
-        }
-    }
-
-    fn document(&self) -> Document {
-        report(&self.inputs())
+            notes: Some("Kept *cold*.".to_owned()),
+            ..Particulars::default()
+        },
+        finding,
+    };
+    Inputs {
+        header: Header {
+            title: "Ring <openings> & others".to_owned(),
+            reference: "T-1".to_owned(),
+            date: "2026-03-01".to_owned(),
+            author: "A. Writer".to_owned(),
+            revision: "2".to_owned(),
+            notes: Some(
+                "# Loud\n\n<script>alert(1)</script>\n\n[x](javascript:alert(1))".to_owned(),
+            ),
+        },
+        entries: vec![
+            entry("Cyclopropane", Ok(cyclopropane)),
+            entry("Cubane", Ok(cubane)),
+            entry("Ammonia", Err("no carbon".to_owned())),
+        ],
+        checks: vec![CheckValue {
+            id: "strain-cyclopropane".to_owned(),
+            quantity: "strain energy".to_owned(),
+            subject: "C1CC1".to_owned(),
+            published: 115.0,
+            unit: "kJ/mol".to_owned(),
+            computed: 117.9,
+            tolerance: 2.5,
+            tolerance_reason: "rounded to the nearest 5".to_owned(),
+            source: "goldbook-s06037".to_owned(),
+            source_seen: "yes".to_owned(),
+            outcome: CheckOutcome::Off,
+        }],
+        monocycles: vec![RingReference {
+            size: 4,
+            strain_kj_per_mol: 110.0,
+            expanded_kj_per_mol: 1.0,
+            source: "crc2014".to_owned(),
+        }],
+        digests: vec![Digest::new("case file", b"title")],
+        versions: vec![("tautring".to_owned(), "0.1.0".to_owned())],
     }
 }
 
 #[test]
 fn the_same_inputs_give_the_same_bytes() {
     let folders = [(); 2].map(|()| {
-        let sample = Sample::new();
+        let sample = sample();
         let folder = tempfile::tempdir().unwrap();
-        let files = write_all(&sample.document(), &sample.inputs(), folder.path()).unwrap();
+        let files = write_all(&report(&sample), &sample, folder.path()).unwrap();
         assert!(files.iter().all(|file| file.starts_with(folder.path())));
         let contents: Vec<_> = files
             .iter()
@@ -205,18 +193,20 @@ fn the_same_inputs_give_the_same_bytes() {
 
 #[test]
 fn the_more_hazardous_of_two_is_named() {
-    let text = markdown(&Sample::new().document());
+    let text = markdown(&report(&sample()));
     assert!(text.contains("The measured value is the more hazardous of the two"));
     assert!(text.contains("The estimate is the more hazardous of the two"));
     assert!(text.contains("differ by 15.1 kJ/mol, more than the U = 3.9 kJ/mol (95 %)"));
-    assert!(text.contains("The case file settles it: *The safety office: wrong sample.*"));
+    assert!(text.contains(
+        "The case file settles it and keeps the **estimate**. *The safety office: wrong sample.*"
+    ));
     assert!(text.contains("Laboratory \\| report \\*7\\*"));
     assert!(text.contains("1 of 1 check values are off"));
 }
 
 #[test]
 fn the_page_needs_nothing_and_runs_nothing() {
-    let document = Sample::new().document();
+    let document = report(&sample());
     let page = html(&document, &markdown(&document)).unwrap();
     for bad in ["<script", "javascript:", "src=", "@import", "url("] {
         assert!(!page.contains(bad), "{bad}");
@@ -256,8 +246,8 @@ fn headings_out_of_order(page: &str) -> Option<String> {
 
 #[test]
 fn json_holds_the_keys_that_other_programs_rely_on() {
-    let sample = Sample::new();
-    let keys = contract(&sample.reviews[0]);
+    let sample = sample();
+    let keys = contract(sample.reviews().next().unwrap());
     let names: Vec<_> = keys
         .as_object()
         .unwrap()
@@ -278,6 +268,7 @@ fn json_holds_the_keys_that_other_programs_rely_on() {
             "decomposition",
             "oxygen_balance_percent",
             "evidence",
+            "evidence_share",
             "flags"
         ]
     );
@@ -285,22 +276,23 @@ fn json_holds_the_keys_that_other_programs_rely_on() {
     assert_eq!(keys["rings"][0]["size"], 3);
     assert!(keys["account"]["bend_kj_per_mol"].is_null());
 
-    let report: serde_json::Value = serde_json::from_str(&json(&sample.inputs()).unwrap()).unwrap();
+    let report: serde_json::Value = serde_json::from_str(&json(&sample).unwrap()).unwrap();
     assert_eq!(
-        report["substances"][0]["details"]["gas"]["comparisons"][1]["agreement"],
+        report["substances"][0]["enthalpy_of_formation"]["gas"]["comparisons"][1]["agreement"],
         "disagrees"
     );
+    assert_eq!(report["substances"][2]["error"], "no carbon");
     assert_eq!(report["digests"][0]["sha256"].as_str().unwrap().len(), 64);
 }
 
 #[test]
 fn a_place_that_cannot_be_written_is_named() {
-    let sample = Sample::new();
+    let sample = sample();
     let folder = tempfile::tempdir().unwrap();
     // A file where the folder should be: this fails for every user, even one that may write everywhere.
     let taken = folder.path().join("taken");
     fs::write(&taken, "before").unwrap();
-    let error = write_all(&sample.document(), &sample.inputs(), &taken).unwrap_err();
+    let error = write_all(&report(&sample), &sample, &taken).unwrap_err();
     assert!(error.to_string().contains("taken"), "{error}");
     assert_eq!(fs::read_to_string(&taken).unwrap(), "before");
 }

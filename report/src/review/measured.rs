@@ -10,7 +10,7 @@ use crate::dataset::Dataset;
 const COVERAGE_FACTOR: f64 = 1.96;
 
 /// Standard uncertainty that a measured value of a case file gets when it states none, kJ/mol: that of the handbook.
-const UNSTATED_KJ_PER_MOL: f64 = 2.0;
+pub const UNSTATED_KJ_PER_MOL: f64 = 2.0;
 
 /// A gas-phase enthalpy of formation that a case file states.
 #[derive(Clone, Debug)]

@@ -6,6 +6,7 @@ mod check_values;
 mod findings;
 mod measured;
 mod reviewer;
+mod stated;
 mod warnings;
 
 pub use check_values::{CheckValueError, check_values};
@@ -13,5 +14,5 @@ pub use findings::{
     Agreement, Basis, CheckOutcome, CheckValue, Comparison, Evidence, FormationEnthalpy,
     MeasuredEnthalpy, Quantity, RingStrain, Strain, SubstanceReview,
 };
-pub use measured::{CaseMeasurement, Settled};
+pub use measured::{CaseMeasurement, Settled, UNSTATED_KJ_PER_MOL};
 pub use reviewer::{ReviewError, Reviewer};

@@ -58,6 +58,18 @@ impl Structure {
         })
     }
 
+    /// Reads a line of a list: a SMILES, then white space and a name or nothing.
+    ///
+    /// # Errors
+    /// As for [`Structure::from_smiles`].
+    pub fn from_line(line: &str) -> Result<Self, StructureError> {
+        let line = line.trim();
+        let (smiles, name) = line.split_once(char::is_whitespace).unwrap_or((line, ""));
+        let mut structure = Self::from_smiles(smiles)?;
+        name.trim().clone_into(&mut structure.name);
+        Ok(structure)
+    }
+
     /// Reads a Molfile, or the first record of an SDF.
     ///
     /// # Errors
@@ -108,7 +120,7 @@ pub fn read_structures(
         let lines = text.lines().map(str::trim);
         lines
             .filter(|line| !line.is_empty() && !line.starts_with('#'))
-            .map(smiles_line)
+            .map(Structure::from_line)
             .collect()
     };
     if structures.is_empty() {
@@ -117,13 +129,6 @@ pub fn read_structures(
         ));
     }
     Ok(structures)
-}
-
-fn smiles_line(line: &str) -> Result<Structure, StructureError> {
-    let (smiles, name) = line.split_once(char::is_whitespace).unwrap_or((line, ""));
-    let mut structure = Structure::from_smiles(smiles)?;
-    name.trim().clone_into(&mut structure.name);
-    Ok(structure)
 }
 
 /// The text of each record of an SDF.

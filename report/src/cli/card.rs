@@ -1,0 +1,158 @@
+//! The results of one structure as lines for people.
+
+use tautring_core::quantities::KJ_PER_KCAL;
+use tautring_report::document::rounding::{fixed, rounded};
+use tautring_report::document::subscripted;
+use tautring_report::review::{Agreement, Basis, Comparison, Quantity, SubstanceReview};
+
+/// What the signs mean; stands once under all cards.
+pub(super) const LEGEND: &str = "\
+±: expanded uncertainty U (95 %) for the true value, k·u with the k beside it. Gas phase, 298.15 K. Atoms count from 1.
+An estimate is no substitute for calorimetry, and a low strain is no proof of safety.";
+
+/// Measurements that are listed; the rest is counted.
+const EVIDENCE_SHOWN: usize = 6;
+
+/// Width of the first column.
+const WIDTH: usize = 24;
+
+/// The card of one structure; `place` is what its head says of where it came from.
+pub(super) fn card(place: &str, review: &SubstanceReview) -> String {
+    let mut lines = vec![if review.name == review.input {
+        place.to_owned()
+    } else {
+        format!("{}  {place}", review.name)
+    }];
+    let mut line = |name: &str, text: String| lines.push(format!("  {name:<WIDTH$}{text}"));
+    line(
+        "formula",
+        format!(
+            "{}, {} g/mol",
+            subscripted(&review.formula),
+            fixed(review.molar_mass_g_per_mol, 2)
+        ),
+    );
+    let gas = &review.gas;
+    let basis = match gas.basis {
+        Basis::Measured => "measured",
+        Basis::Estimated => "estimated",
+    };
+    line(
+        "enthalpy of formation",
+        format!("{}, {basis}", with_factor(gas.quantity)),
+    );
+    for comparison in &gas.comparisons {
+        line("  measured", compared(comparison));
+    }
+    if gas.basis == Basis::Measured {
+        line("  estimate", with_factor(gas.estimate));
+    }
+    strain(review, &mut line);
+    line(
+        "oxygen balance",
+        format!("{} %", fixed(review.oxygen_balance_percent, 1)),
+    );
+    evidence(review, &mut line);
+    for (index, flag) in review.flags.iter().enumerate() {
+        line(if index == 0 { "flags" } else { "" }, format!("! {flag}"));
+    }
+    lines.push(String::new());
+    lines.join("\n")
+}
+
+fn strain(review: &SubstanceReview, line: &mut impl FnMut(&str, String)) {
+    let strain = &review.strain;
+    if strain.ring_systems.is_empty() {
+        line("strain", "none: no ring that is not aromatic".to_owned());
+        return;
+    }
+    let expanded = strain.quantity.expanded_kj_per_mol;
+    line(
+        "strain",
+        format!(
+            "{}; {} kcal/mol; {} J/g",
+            with_factor(strain.quantity),
+            rounded(strain.value_kcal_per_mol, expanded / KJ_PER_KCAL).interval(),
+            rounded(strain.j_per_g, strain.expanded_j_per_g).interval()
+        ),
+    );
+    line(
+        "",
+        format!("sum of the ring levels ({})", strain.convention),
+    );
+    if let Some(measured) = strain.measured_minus_strain_free {
+        line(
+            "",
+            format!("{}: measured minus strain-free sum", with_factor(measured)),
+        );
+    }
+    if strain.ring_systems.len() > 1 {
+        line("ring systems", strain.ring_systems.len().to_string());
+    }
+    for system in &strain.ring_systems {
+        let atoms: Vec<_> = system
+            .atoms
+            .iter()
+            .map(|atom| (atom + 1).to_string())
+            .collect();
+        let sizes: Vec<_> = system.sizes.iter().map(ToString::to_string).collect();
+        line(
+            "  ring system",
+            format!(
+                "{}: atoms {}; ring sizes {}",
+                with_factor(system.quantity),
+                atoms.join(" "),
+                sizes.join(" ")
+            ),
+        );
+    }
+}
+
+fn evidence(review: &SubstanceReview, line: &mut impl FnMut(&str, String)) {
+    let evidence = &review.gas.evidence;
+    for (index, row) in evidence.iter().take(EVIDENCE_SHOWN).enumerate() {
+        line(
+            if index == 0 { "leans on (weight)" } else { "" },
+            format!(
+                "{:>6}  {}  {}  [{}]",
+                fixed(row.weight, 3),
+                row.molecule,
+                row.smiles,
+                row.source
+            ),
+        );
+    }
+    if evidence.len() > EVIDENCE_SHOWN {
+        line(
+            "",
+            format!(
+                "and {} more; together {} % of the absolute weight",
+                evidence.len() - EVIDENCE_SHOWN,
+                fixed(100.0 * review.gas.evidence_share, 0)
+            ),
+        );
+    }
+}
+
+/// `115.6 ± 3.1 kJ/mol (k = 2.04)`.
+fn with_factor(quantity: Quantity) -> String {
+    let value = rounded(quantity.value_kj_per_mol, quantity.expanded_kj_per_mol);
+    let factor = quantity.expanded_kj_per_mol / quantity.u_kj_per_mol;
+    format!("{} kJ/mol (k = {})", value.interval(), fixed(factor, 2))
+}
+
+fn compared(comparison: &Comparison) -> String {
+    let measured = &comparison.measured;
+    let blind = comparison.blind;
+    let verdict = match comparison.agreement {
+        Agreement::Agrees => "they agree",
+        Agreement::Disagrees => "they DISAGREE",
+        Agreement::Settled => "settled",
+    };
+    format!(
+        "{} [{}]; estimate without it {} kJ/mol: {verdict}",
+        with_factor(measured.quantity),
+        measured.source,
+        rounded(blind.value_kj_per_mol, blind.expanded_kj_per_mol).interval()
+    )
+}
