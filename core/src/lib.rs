@@ -8,7 +8,7 @@
 //! 1. [`strain`]: conventional strain of a molecule and of each of its ring systems
 //! 2. [`additivity`], [`mechanics`]: enthalpies of formation with uncertainties; angle bend and torsion
 //! 3. [`geometry`]: distance, angle and dihedral with derivatives
-//! 4. [`molecule`]: elements, the molecular graph, rings, aromaticity
+//! 4. [`molecule`]: elements, the molecular graph, rings, aromaticity; [`oxygen_balance`]
 //! 5. [`quantities`], `float`: units; transcendental functions
 
 #![no_std]
@@ -18,5 +18,6 @@ mod float;
 pub mod geometry;
 pub mod mechanics;
 pub mod molecule;
+pub mod oxygen_balance;
 pub mod quantities;
 pub mod strain;

@@ -4,6 +4,7 @@
 //! structures.
 
 pub mod case;
+pub mod dataset;
 pub mod fit;
 pub mod review;
 pub mod structure;

@@ -6,8 +6,9 @@ use std::process::ExitCode;
 
 use clap::{Parser, Subcommand};
 use tautring_core::additivity::{CONTRIBUTIONS, Level, Prior};
+use tautring_report::dataset::Dataset;
 use tautring_report::fit::{
-    Dataset, Hyperparameters, LevelMatrices, Posterior, Tables, leave_out, search,
+    Hyperparameters, LevelMatrices, Posterior, Tables, leave_out, search,
 };
 
 /// Fit the additivity to the measured enthalpies of formation in data/.

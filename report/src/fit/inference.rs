@@ -6,7 +6,7 @@ use serde::{Deserialize, Serialize};
 use tautring_core::additivity::{AdditivityError, CONTRIBUTIONS, Level, Prior, cholesky};
 use tautring_core::molecule::Element;
 
-use super::Dataset;
+use crate::dataset::Dataset;
 use super::matrices::{LevelMatrices, invert, quadratic_form, trace_of_product};
 
 /// What the search finds and the tables are made from.

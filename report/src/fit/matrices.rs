@@ -2,7 +2,7 @@
 
 use tautring_core::additivity::{CONTRIBUTIONS, Level, Prior, cholesky};
 
-use super::Dataset;
+use crate::dataset::Dataset;
 
 /// Prior covariance matrices of the measurements for a prior variance of 1 in each level.
 pub struct LevelMatrices {

@@ -1,12 +1,10 @@
 //! The fit: from measured enthalpies of formation to the coefficient tables of the core.
 
-mod dataset;
 mod inference;
 mod matrices;
 mod tables;
 mod validation;
 
-pub use dataset::{Dataset, DatasetError, HostFeatures, Measurement, Row};
 pub use inference::{Hyperparameters, Posterior, search};
 pub use matrices::LevelMatrices;
 pub use tables::{TableError, Tables};

@@ -5,7 +5,7 @@ use std::fmt::Write as _;
 
 use tautring_core::additivity::{Key, Level, Model, Prior};
 
-use super::Dataset;
+use crate::dataset::Dataset;
 use super::inference::Posterior;
 
 /// The parts of a [`Model`], owned.

@@ -5,7 +5,7 @@ use std::fmt::Write as _;
 use tautring_core::additivity::{Estimate, Level, cholesky};
 use tautring_core::molecule::Element;
 
-use super::dataset::{Dataset, Row};
+use crate::dataset::{Dataset, Row};
 use super::inference::{Posterior, entry};
 
 /// One measurement predicted from all measurements of other molecules.

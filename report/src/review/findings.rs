@@ -60,6 +60,8 @@ pub struct Comparison {
     pub agreement: Agreement,
     /// What the case file says when it settles a disagreement: by whom and why.
     pub settled_by: Option<String>,
+    /// Whether the case file settles it in favour of the estimate.
+    pub keeps_estimate: bool,
 }
 
 /// The enthalpy of formation in the gas phase at 298.15 K.

@@ -2,9 +2,16 @@
 //!
 //! Nothing here computes chemistry; the core does.
 
+mod check_values;
 mod findings;
+mod measured;
+mod reviewer;
+mod warnings;
 
+pub use check_values::{CheckValueError, check_values};
 pub use findings::{
     Agreement, Basis, CheckOutcome, CheckValue, Comparison, Evidence, FormationEnthalpy,
     MeasuredEnthalpy, Quantity, RingStrain, Strain, SubstanceReview,
 };
+pub use measured::{CaseMeasurement, Settled};
+pub use reviewer::{ReviewError, Reviewer};

@@ -1,4 +1,4 @@
-//! The measurements that the fit uses.
+//! The published measurements: what the model was fitted to, and what its estimates are traced back to.
 
 use std::collections::BTreeMap;
 use std::fmt;
@@ -6,7 +6,7 @@ use std::fmt;
 use serde::Deserialize;
 use tautring_core::additivity::{Features, count};
 
-use crate::structure::Structure;
+use crate::structure::{Structure, identity, skeleton};
 
 /// Features of a molecule as large as the host reads.
 pub type HostFeatures = Features<4096>;
@@ -47,6 +47,10 @@ pub struct Row {
     pub molecule: usize,
     /// The molecule without stereo: what is left out together.
     pub constitution: usize,
+    /// Canonical text of the molecule, stereo included.
+    pub identity: String,
+    /// Canonical text of the molecule without stereo and isotopes.
+    pub skeleton: String,
     /// The structure.
     pub structure: Structure,
 }
@@ -114,18 +118,12 @@ impl Dataset {
             let features: HostFeatures =
                 count(&structure.molecule).map_err(|e| fail(&measurement.name, e.to_string()))?;
             let row = data.rows.len();
-            let molecule = assign(
-                &mut molecules,
-                structure.identity(),
-                &mut data.molecules,
-                row,
-            );
-            let constitution = assign(
-                &mut constitutions,
-                structure.constitution(),
-                &mut data.constitutions,
-                row,
-            );
+            let identity = identity(&structure.molecule);
+            let skeleton = skeleton(&structure.molecule)
+                .map_err(|e| fail(&measurement.name, e.to_string()))?;
+            let molecule = assign(&mut molecules, &identity, &mut data.molecules, row);
+            let constitution =
+                assign(&mut constitutions, &skeleton, &mut data.constitutions, row);
             data.rows.push(Row {
                 value_kj_per_mol: measurement.value_kj_per_mol,
                 u_kj_per_mol: measurement.u_kj_per_mol,
@@ -133,6 +131,8 @@ impl Dataset {
                 features,
                 molecule,
                 constitution,
+                identity,
+                skeleton,
                 structure,
             });
         }
@@ -141,13 +141,13 @@ impl Dataset {
 }
 
 /// The number of the set that `key` names, with `row` added to it.
-fn assign<K: Ord>(
-    known: &mut BTreeMap<K, usize>,
-    key: K,
+fn assign(
+    known: &mut BTreeMap<String, usize>,
+    key: &str,
     sets: &mut Vec<Vec<usize>>,
     row: usize,
 ) -> usize {
-    let set = *known.entry(key).or_insert_with(|| {
+    let set = *known.entry(key.to_owned()).or_insert_with(|| {
         sets.push(Vec::new());
         sets.len() - 1
     });

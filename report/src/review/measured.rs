@@ -1,0 +1,156 @@
+//! Measured values beside the estimate made without them, and which of the two the review uses.
+
+use tautring_core::additivity::Estimate;
+
+use super::findings::{Agreement, Basis, Comparison, MeasuredEnthalpy, Quantity};
+use super::reviewer::quantity_of;
+use crate::dataset::Dataset;
+
+/// Coverage factor of a measured value whose distribution is not stated: 95 % of a normal distribution.
+const COVERAGE_FACTOR: f64 = 1.96;
+
+/// Standard uncertainty that a measured value of a case file gets when it states none, kJ/mol: that of the handbook.
+const UNSTATED_KJ_PER_MOL: f64 = 2.0;
+
+/// A gas-phase enthalpy of formation that a case file states.
+#[derive(Clone, Debug)]
+pub struct CaseMeasurement {
+    /// The value, kJ/mol.
+    pub value_kj_per_mol: f64,
+    /// Standard uncertainty, kJ/mol, if stated.
+    pub u_kj_per_mol: Option<f64>,
+    /// Where it comes from.
+    pub source: String,
+    /// Who settled a disagreement with the estimate and why, and whether the measured value stays.
+    pub settled: Option<Settled>,
+}
+
+/// How a case file settles a disagreement.
+#[derive(Clone, Debug)]
+pub struct Settled {
+    /// Whether the measured value stays; else the estimate does.
+    pub keep_measured: bool,
+    /// By whom and why.
+    pub reason: String,
+}
+
+/// Compares the measured values, those of the case file first, with the estimate made without them.
+pub(super) fn compare(
+    data: &Dataset,
+    published: &[usize],
+    case: &[CaseMeasurement],
+    without: &Estimate,
+) -> Vec<Comparison> {
+    let stated = case.iter().map(|m| {
+        let measured = MeasuredEnthalpy {
+            quantity: Quantity {
+                value_kj_per_mol: m.value_kj_per_mol,
+                u_kj_per_mol: m.u_kj_per_mol.unwrap_or(UNSTATED_KJ_PER_MOL),
+            },
+            source: m.source.clone(),
+            from_case: true,
+        };
+        comparison(measured, m.settled.as_ref(), without)
+    });
+    let known = published.iter().map(|&index| {
+        let row = &data.rows[index];
+        let measured = MeasuredEnthalpy {
+            quantity: Quantity {
+                value_kj_per_mol: row.value_kj_per_mol,
+                u_kj_per_mol: row.u_kj_per_mol,
+            },
+            source: row.measurement.source.clone(),
+            from_case: false,
+        };
+        comparison(measured, None, without)
+    });
+    stated.chain(known).collect()
+}
+
+fn comparison(
+    measured: MeasuredEnthalpy,
+    settled: Option<&Settled>,
+    without: &Estimate,
+) -> Comparison {
+    let difference = measured.quantity.value_kj_per_mol - without.value_kj_per_mol;
+    let expanded = without
+        .of_measurement(measured.quantity.u_kj_per_mol)
+        .expanded_kj_per_mol();
+    let agreement = if difference.abs() <= expanded {
+        Agreement::Agrees
+    } else if settled.is_some() {
+        Agreement::Settled
+    } else {
+        Agreement::Disagrees
+    };
+    Comparison {
+        measured,
+        blind: quantity_of(without),
+        difference_kj_per_mol: difference,
+        expanded_kj_per_mol: expanded,
+        agreement,
+        settled_by: settled.map(|s| s.reason.clone()),
+        keeps_estimate: settled.is_some_and(|s| !s.keep_measured),
+    }
+}
+
+/// The value that the review uses for a molecule with measured values.
+pub(super) struct Chosen {
+    /// The value.
+    pub quantity: Quantity,
+    /// What it rests on.
+    pub basis: Basis,
+    /// Expanded uncertainty (95 %), kJ/mol.
+    pub expanded_kj_per_mol: f64,
+}
+
+impl Chosen {
+    /// Chooses; `None` without measured values.
+    ///
+    /// A value that somebody settled stands. Else, as long as every measured value agrees with the estimate made without them, the one of smallest uncertainty
+    /// (the case file's before published ones when equal). Else the highest enthalpy of formation among the measured values and
+    /// that estimate, which is the hazardous side.
+    pub(super) fn of(comparisons: &[Comparison], without: &Estimate) -> Option<Self> {
+        let settled = comparisons.iter().find(|c| c.settled_by.is_some());
+        if let Some(comparison) = settled {
+            return Some(if comparison.keeps_estimate {
+                Self::estimated(without)
+            } else {
+                Self::measured(comparison)
+            });
+        }
+        let surest = comparisons.iter().min_by(|a, b| {
+            let u = |c: &Comparison| c.measured.quantity.u_kj_per_mol;
+            u(a).total_cmp(&u(b))
+        })?;
+        if comparisons.iter().all(|c| c.agreement == Agreement::Agrees) {
+            return Some(Self::measured(surest));
+        }
+        let value = |c: &Comparison| c.measured.quantity.value_kj_per_mol;
+        let highest = comparisons
+            .iter()
+            .max_by(|a, b| value(a).total_cmp(&value(b)))?;
+        Some(if without.value_kj_per_mol > value(highest) {
+            Self::estimated(without)
+        } else {
+            Self::measured(highest)
+        })
+    }
+
+    fn measured(comparison: &Comparison) -> Self {
+        let quantity = comparison.measured.quantity;
+        Self {
+            quantity,
+            basis: Basis::Measured,
+            expanded_kj_per_mol: COVERAGE_FACTOR * quantity.u_kj_per_mol,
+        }
+    }
+
+    fn estimated(without: &Estimate) -> Self {
+        Self {
+            quantity: quantity_of(without),
+            basis: Basis::Estimated,
+            expanded_kj_per_mol: without.expanded_kj_per_mol(),
+        }
+    }
+}
