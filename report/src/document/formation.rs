@@ -1,0 +1,204 @@
+//! The enthalpy of formation: measured values first, the estimate beside them, and what the estimate leans on.
+
+use super::bibliography::Citations;
+use super::block::{Block, Column, Note, NoteKind, Table};
+use super::inline::Inline;
+use super::report::heading;
+use super::rounding::{fixed, rounded, uncertainty};
+use super::summary::basis_word;
+use crate::review::{Agreement, Comparison, Evidence, FormationEnthalpy};
+
+pub(super) fn blocks(gas: &FormationEnthalpy, citations: &mut Citations) -> Vec<Block> {
+    let mut blocks = vec![heading(4, "Enthalpy of formation, gas, 298.15 K")];
+    if gas.comparisons.is_empty() {
+        blocks.push(Block::Note(Note {
+            kind: NoteKind::Caution,
+            paragraphs: vec![
+                "No measured value of this molecule was used: the number below is an estimate."
+                    .into(),
+            ],
+        }));
+    } else {
+        blocks.push(comparisons(&gas.comparisons, citations));
+        blocks.extend(
+            gas.comparisons
+                .iter()
+                .filter_map(|comparison| verdict(comparison, citations)),
+        );
+    }
+    blocks.push(values(gas));
+    blocks.push(evidence(gas, citations));
+    blocks
+}
+
+fn comparisons(comparisons: &[Comparison], citations: &mut Citations) -> Block {
+    let rows = comparisons
+        .iter()
+        .map(|comparison| {
+            let measured = &comparison.measured;
+            let value = rounded(
+                measured.quantity.value_kj_per_mol,
+                measured.quantity.u_kj_per_mol,
+            );
+            let blind = rounded(
+                comparison.blind.value_kj_per_mol,
+                comparison.blind.u_kj_per_mol,
+            );
+            let difference = rounded(
+                comparison.difference_kj_per_mol,
+                comparison.expanded_kj_per_mol,
+            );
+            let source = Inline::new().with(citations.cite(&measured.source));
+            vec![
+                if measured.from_case {
+                    "case file"
+                } else {
+                    "project data"
+                }
+                .into(),
+                source,
+                value.value.into(),
+                value.uncertainty.into(),
+                blind.value.into(),
+                blind.uncertainty.into(),
+                difference.interval().into(),
+                match comparison.agreement {
+                    Agreement::Agrees => Inline::from("agree"),
+                    Agreement::Disagrees => Inline::new().strong("disagree"),
+                    Agreement::Settled => Inline::from("settled"),
+                },
+            ]
+        })
+        .collect();
+    Block::Table(Table {
+        caption: "Measured values of the molecule itself, beside the estimate that leaves every one of them out. They agree when the difference is within its U (95 %).".into(),
+        columns: vec![
+            Column::words("From"),
+            Column::words("Source"),
+            Column::numbers("Measured, kJ/mol"),
+            Column::numbers("u, kJ/mol"),
+            Column::numbers("Estimate without it, kJ/mol"),
+            Column::numbers("u, kJ/mol"),
+            Column::numbers("Measured minus estimate ± U, kJ/mol"),
+            Column::words("Verdict"),
+        ],
+        rows,
+    })
+}
+
+/// What to make of a disagreement; nothing to say when they agree.
+fn verdict(comparison: &Comparison, citations: &mut Citations) -> Option<Block> {
+    let measured = &comparison.measured;
+    let source = citations.cite(&measured.source);
+    let difference = rounded(
+        comparison.difference_kj_per_mol.abs(),
+        comparison.expanded_kj_per_mol,
+    );
+    let opening = Inline::new()
+        .text(format!(
+            "The measured value {} kJ/mol (",
+            rounded(measured.quantity.value_kj_per_mol, measured.quantity.u_kj_per_mol).value
+        ))
+        .with(source)
+        .text(format!(
+            ") and the estimate {} kJ/mol differ by {} kJ/mol, more than the U = {} kJ/mol (95 %) of their difference. ",
+            rounded(comparison.blind.value_kj_per_mol, comparison.blind.u_kj_per_mol).value,
+            difference.value,
+            difference.uncertainty
+        ));
+    let (hazardous, other) = if comparison.difference_kj_per_mol > 0.0 {
+        ("measured value", "estimate")
+    } else {
+        ("estimate", "measured value")
+    };
+    let higher = format!(
+        "The {hazardous} is the more hazardous of the two: its enthalpy of formation is the higher one, and more energy can come out than the {other} says."
+    );
+    let (kind, words) = match comparison.agreement {
+        Agreement::Agrees => return None,
+        Agreement::Disagrees => (
+            NoteKind::Warning,
+            opening.strong(format!(
+                "{higher} It counts until someone settles it by name in the case file."
+            )),
+        ),
+        Agreement::Settled => {
+            let settled = comparison.settled_by.as_deref().unwrap_or("no words given");
+            (
+                NoteKind::Information,
+                opening
+                    .text(format!("{higher} The case file settles it: "))
+                    .emphasis(settled),
+            )
+        }
+    };
+    Some(Block::Note(Note {
+        kind,
+        paragraphs: vec![words],
+    }))
+}
+
+fn values(gas: &FormationEnthalpy) -> Block {
+    let used = rounded(gas.quantity.value_kj_per_mol, gas.quantity.u_kj_per_mol);
+    let estimate = rounded(gas.estimate.value_kj_per_mol, gas.estimate.u_kj_per_mol);
+    Block::Table(Table {
+        caption: "The value that this report uses, and the additivity's estimate from all measurements that it may lean on. U (95 %) is for the true value.".into(),
+        columns: vec![
+            Column::words("Value"),
+            Column::words("Basis"),
+            Column::numbers("Enthalpy of formation, kJ/mol"),
+            Column::numbers("u, kJ/mol"),
+            Column::numbers("U, kJ/mol"),
+        ],
+        rows: vec![
+            vec![
+                Inline::new().strong("Used"),
+                basis_word(gas.basis).into(),
+                Inline::new().strong(used.value),
+                used.uncertainty.into(),
+                uncertainty(gas.expanded_kj_per_mol).into(),
+            ],
+            vec![
+                "Estimate".into(),
+                "estimated".into(),
+                estimate.value.into(),
+                estimate.uncertainty.into(),
+                "—".into(),
+            ],
+        ],
+    })
+}
+
+fn evidence(gas: &FormationEnthalpy, citations: &mut Citations) -> Block {
+    let rows = gas
+        .evidence
+        .iter()
+        .map(|evidence: &Evidence| {
+            let value = rounded(evidence.value_kj_per_mol, evidence.u_kj_per_mol);
+            vec![
+                Inline::from(evidence.molecule.as_str()),
+                Inline::new().code(evidence.smiles.as_str()),
+                fixed(evidence.weight, 3).into(),
+                value.value.into(),
+                value.uncertainty.into(),
+                Inline::new().with(citations.cite(&evidence.source)),
+            ]
+        })
+        .collect();
+    Block::Table(Table {
+        caption: format!(
+            "The measurements that the estimate leans on most; together they carry {} % of the absolute weight. A weight says how far the estimate moves, in kJ/mol, when the measured value moves by 1 kJ/mol; it may be negative.",
+            fixed(100.0 * gas.evidence_share, 0)
+        )
+        .into(),
+        columns: vec![
+            Column::words("Measured compound"),
+            Column::words("Structure"),
+            Column::numbers("Weight"),
+            Column::numbers("Enthalpy of formation, kJ/mol"),
+            Column::numbers("u, kJ/mol"),
+            Column::words("Source"),
+        ],
+        rows,
+    })
+}
