@@ -1,31 +1,27 @@
 //! Everything an estimate is made of, as bits.
 
-use tautring_core::additivity::{Features, count};
+use tautring_core::additivity::{AdditivityError, Features, count};
 use tautring_report::structure::HostMolecule;
 
-/// Formula, and the counted features with their bits.
+/// Formula, and the counted features with their bits, or why there are none.
 ///
 /// Two molecules with equal fingerprints have the same estimate to the last bit: nothing else enters it.
-#[derive(Debug, PartialEq, Eq)]
+#[derive(Debug, PartialEq)]
 pub struct Fingerprint {
     formula: String,
+    counted: Result<Counted, AdditivityError>,
+}
+
+#[derive(Debug, PartialEq)]
+struct Counted {
     terms: Vec<(u64, u64)>,
     deviation: Vec<u64>,
 }
 
-/// The features of a molecule.
-///
-/// # Panics
-/// When the molecule has more features than the host reads.
-pub fn features(molecule: &HostMolecule) -> Features<4096> {
-    count(molecule).unwrap_or_else(|e| panic!("{}: {e}", molecule.formula()))
-}
-
 /// The fingerprint of a molecule.
 pub fn fingerprint(molecule: &HostMolecule) -> Fingerprint {
-    let features = features(molecule);
-    Fingerprint {
-        formula: molecule.formula().to_string(),
+    let features: Result<Features<4096>, _> = count(molecule);
+    let counted = features.map(|features| Counted {
         terms: features
             .terms()
             .iter()
@@ -35,7 +31,11 @@ pub fn fingerprint(molecule: &HostMolecule) -> Fingerprint {
             .deviation()
             .counts()
             .iter()
-            .map(|c| c.to_bits())
+            .map(|count| count.to_bits())
             .collect(),
+    });
+    Fingerprint {
+        formula: molecule.formula().to_string(),
+        counted,
     }
 }
