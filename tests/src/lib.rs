@@ -5,4 +5,5 @@ pub mod folder;
 pub mod program;
 pub mod random;
 pub mod renumber;
+pub mod scratch;
 pub mod table;

@@ -29,10 +29,7 @@ fn propane_bend_of_common_practice() {
 #[test]
 fn cubic_and_linear_bends_as_rdkit_has_them() {
     let mut rows = 0;
-    for line in include_str!("../reference/bend_mmff94.csv")
-        .lines()
-        .skip(1)
-    {
+    for line in include_str!("../reference/bend_mmff94.csv").lines().skip(1) {
         let (smiles, numbers) = line.split_once(',').unwrap();
         let numbers: Vec<f64> = numbers.split(',').map(|n| n.parse().unwrap()).collect();
         let (constant, reference_deg, energy_kcal) = (numbers[0], numbers[1], numbers[2]);
