@@ -122,8 +122,7 @@ impl Dataset {
             let skeleton = skeleton(&structure.molecule)
                 .map_err(|e| fail(&measurement.name, e.to_string()))?;
             let molecule = assign(&mut molecules, &identity, &mut data.molecules, row);
-            let constitution =
-                assign(&mut constitutions, &skeleton, &mut data.constitutions, row);
+            let constitution = assign(&mut constitutions, &skeleton, &mut data.constitutions, row);
             data.rows.push(Row {
                 value_kj_per_mol: measurement.value_kj_per_mol,
                 u_kj_per_mol: measurement.u_kj_per_mol,

@@ -29,12 +29,12 @@ pub enum Level {
     GeminalElements,
     /// Pairs of atoms two bonds apart, with the atom between.
     Geminal,
+    /// Pairs of atoms two and three bonds apart, by element and hydrogens.
+    NextNearest,
     /// Pairs of atoms three bonds apart across a bond that is in no ring, by class.
     VicinalElements,
     /// Pairs of atoms three bonds apart across a bond that is in no ring.
     Vicinal,
-    /// Unavoidable gauche contacts across a bond that is in no ring.
-    Gauche,
     /// Pairs of branched atoms that bring substituents five atoms apart face to face.
     OneFive,
     /// Substituents on one side of a double bond.
@@ -45,16 +45,10 @@ pub enum Level {
     AromaticRing,
     /// Rings by size, smooth in size.
     RingSize,
-    /// Rings by size and composition, smooth in size.
-    RingClass,
-    /// Atoms and bonds by the sizes of the rings that they are in, whatever the elements.
-    RingSite,
     /// Ring atoms by type and the sizes of the rings that they are in.
     RingAtom,
     /// Ring bonds by types and the sizes of the rings that they are in.
     RingBond,
-    /// Pairs of rings by the atoms that they share.
-    RingFusion,
     /// Pairs of substituents on adjacent ring atoms.
     RingVicinal,
     /// Relative configuration in rings.
@@ -63,7 +57,7 @@ pub enum Level {
 
 impl Level {
     /// Every level, in the order of the keys.
-    pub const ALL: [Self; 26] = [
+    pub const ALL: [Self; 23] = [
         Self::Element,
         Self::Atom,
         Self::BondOrder,
@@ -75,19 +69,16 @@ impl Level {
         Self::Shell,
         Self::GeminalElements,
         Self::Geminal,
+        Self::NextNearest,
         Self::VicinalElements,
         Self::Vicinal,
-        Self::Gauche,
         Self::OneFive,
         Self::Cis,
         Self::AromaticPair,
         Self::AromaticRing,
         Self::RingSize,
-        Self::RingClass,
-        Self::RingSite,
         Self::RingAtom,
         Self::RingBond,
-        Self::RingFusion,
         Self::RingVicinal,
         Self::RingConfiguration,
     ];
@@ -106,19 +97,16 @@ impl Level {
             Self::Shell => "shell",
             Self::GeminalElements => "geminal elements",
             Self::Geminal => "geminal pair",
+            Self::NextNearest => "next-nearest pair",
             Self::VicinalElements => "vicinal elements",
             Self::Vicinal => "vicinal pair",
-            Self::Gauche => "gauche",
             Self::OneFive => "1,5 contact",
             Self::Cis => "cis",
             Self::AromaticPair => "aromatic pair",
             Self::AromaticRing => "aromatic ring",
             Self::RingSize => "ring size",
-            Self::RingClass => "ring class",
-            Self::RingSite => "ring site",
             Self::RingAtom => "ring atom",
             Self::RingBond => "ring bond",
-            Self::RingFusion => "ring fusion",
             Self::RingVicinal => "ring vicinal pair",
             Self::RingConfiguration => "ring configuration",
         }
@@ -131,6 +119,6 @@ impl Level {
 
     /// Whether the level's features are correlated between neighbouring ring sizes.
     pub const fn is_smooth(self) -> bool {
-        matches!(self, Self::RingSize | Self::RingClass)
+        matches!(self, Self::RingSize)
     }
 }

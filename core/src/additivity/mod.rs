@@ -8,6 +8,7 @@ mod deviation;
 mod error;
 mod estimate;
 mod features;
+pub mod gas;
 mod key;
 mod level;
 mod levels;

@@ -30,8 +30,8 @@ pub struct Model<'a> {
     pub counts: &'a [u8],
     /// The measured values, kJ/mol.
     pub values: &'a [f64],
-    /// Packed lower Cholesky factor of K.
-    pub factor: &'a [f64],
+    /// Packed lower Cholesky factor of K, each number as little-endian bytes.
+    pub factor: &'a [[u8; 8]],
 }
 
 impl Model<'_> {

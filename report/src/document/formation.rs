@@ -46,7 +46,7 @@ fn comparisons(comparisons: &[Comparison], citations: &mut Citations) -> Block {
             );
             let difference = rounded(
                 comparison.difference_kj_per_mol,
-                comparison.expanded_kj_per_mol,
+                comparison.expanded_difference_kj_per_mol,
             );
             let source = Inline::new().with(citations.cite(&measured.source));
             vec![
@@ -92,7 +92,7 @@ fn verdict(comparison: &Comparison, citations: &mut Citations) -> Option<Block> 
     let source = citations.cite(&measured.source);
     let difference = rounded(
         comparison.difference_kj_per_mol.abs(),
-        comparison.expanded_kj_per_mol,
+        comparison.expanded_difference_kj_per_mol,
     );
     let opening = Inline::new()
         .text(format!(
@@ -156,7 +156,7 @@ fn values(gas: &FormationEnthalpy) -> Block {
                 basis_word(gas.basis).into(),
                 Inline::new().strong(used.value),
                 used.uncertainty.into(),
-                uncertainty(gas.expanded_kj_per_mol).into(),
+                uncertainty(gas.quantity.expanded_kj_per_mol).into(),
             ],
             vec![
                 "Estimate".into(),

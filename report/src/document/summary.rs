@@ -38,7 +38,7 @@ fn table(inputs: &Inputs<'_>) -> Block {
                 rounded(strain.j_per_g, k * strain.u_j_per_g)
                     .interval()
                     .into(),
-                rounded(gas.quantity.value_kj_per_mol, gas.expanded_kj_per_mol)
+                rounded(gas.quantity.value_kj_per_mol, gas.quantity.expanded_kj_per_mol)
                     .interval()
                     .into(),
                 basis_word(gas.basis).into(),

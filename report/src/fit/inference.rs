@@ -6,8 +6,8 @@ use serde::{Deserialize, Serialize};
 use tautring_core::additivity::{AdditivityError, CONTRIBUTIONS, Level, Prior, cholesky};
 use tautring_core::molecule::Element;
 
-use crate::dataset::Dataset;
 use super::matrices::{LevelMatrices, invert, quadratic_form, trace_of_product};
+use crate::dataset::Dataset;
 
 /// What the search finds and the tables are made from.
 #[derive(Clone, Debug, Serialize, Deserialize)]
@@ -203,6 +203,9 @@ impl Posterior {
     }
 }
 
+/// Least deviation from additivity that one heavy atom brings, kJ/mol: elements of few measurements would else pass for exactly additive.
+const LEAST_DEVIATION_KJ_PER_MOL: f64 = 0.25;
+
 /// Rounds after which the weights of the heavy tails have settled.
 const WEIGHT_ROUNDS: usize = 12;
 
@@ -283,7 +286,7 @@ pub fn search(
             .zip(trace)
         {
             if t > 0.0 {
-                *scale *= (q / t).sqrt();
+                *scale = (*scale * (q / t).sqrt()).max(LEAST_DEVIATION_KJ_PER_MOL);
             }
         }
         weights = posterior.weights(data);

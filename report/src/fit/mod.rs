@@ -8,6 +8,4 @@ mod validation;
 pub use inference::{Hyperparameters, Posterior, search};
 pub use matrices::LevelMatrices;
 pub use tables::{TableError, Tables};
-pub use validation::{
-    LeftOut, Summary, describe, leave_out, left_out_csv, summarise,
-};
+pub use validation::{LeftOut, Summary, describe, leave_out, left_out_csv, summarise};

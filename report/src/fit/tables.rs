@@ -5,8 +5,8 @@ use std::fmt::Write as _;
 
 use tautring_core::additivity::{Key, Level, Model, Prior};
 
-use crate::dataset::Dataset;
 use super::inference::Posterior;
+use crate::dataset::Dataset;
 
 /// The parts of a [`Model`], owned.
 pub struct Tables {
@@ -17,7 +17,7 @@ pub struct Tables {
     rows: Vec<u16>,
     counts: Vec<u8>,
     values: Vec<f64>,
-    factor: Vec<f64>,
+    factor: Vec<[u8; 8]>,
 }
 
 /// A feature that the tables cannot hold.
@@ -70,7 +70,7 @@ impl Tables {
             rows: Vec::new(),
             counts: Vec::new(),
             values: data.rows.iter().map(|r| r.value_kj_per_mol).collect(),
-            factor: posterior.factor,
+            factor: posterior.factor.iter().map(|x| x.to_le_bytes()).collect(),
         };
         for entries in columns.values() {
             let dual = entries.iter().fold(0.0, |sum, &(row, count)| {
@@ -99,8 +99,8 @@ impl Tables {
     }
 
     /// The factor as little-endian bytes.
-    pub fn factor_bytes(&self) -> Vec<u8> {
-        self.factor.iter().flat_map(|x| x.to_le_bytes()).collect()
+    pub fn factor_bytes(&self) -> &[u8] {
+        self.factor.as_flattened()
     }
 
     /// The tables, but for the factor, as a Rust file of the core.

@@ -5,8 +5,8 @@ use std::fmt::Write as _;
 use tautring_core::additivity::{Estimate, Level, cholesky};
 use tautring_core::molecule::Element;
 
-use crate::dataset::{Dataset, Row};
 use super::inference::{Posterior, entry};
+use crate::dataset::{Dataset, Row};
 
 /// One measurement predicted from all measurements of other molecules.
 #[derive(Clone, Copy, Debug)]
@@ -202,7 +202,8 @@ pub fn describe(data: &Dataset, errors: &[LeftOut]) -> String {
     for supported in [false, true] {
         for (name, belongs) in FAMILIES {
             let chosen = errors.iter().filter(|e| {
-                belongs(&data.rows[e.row]) && (!supported || e.estimate.u_kj_per_mol() <= SUPPORTED_KJ_PER_MOL)
+                belongs(&data.rows[e.row])
+                    && (!supported || e.estimate.u_kj_per_mol() <= SUPPORTED_KJ_PER_MOL)
             });
             if let Some(s) = summarise(chosen) {
                 let mark = if supported { ", u at most 8" } else { "" };

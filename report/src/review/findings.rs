@@ -2,13 +2,16 @@
 
 use serde::Serialize;
 
-/// A value with its standard uncertainty in one unit, kJ/mol.
+/// A value with its uncertainty, kJ/mol.
 #[derive(Clone, Copy, Debug, PartialEq, Serialize)]
 pub struct Quantity {
     /// The value, kJ/mol.
     pub value_kj_per_mol: f64,
     /// Standard uncertainty, kJ/mol.
     pub u_kj_per_mol: f64,
+    /// Expanded uncertainty (95 %), kJ/mol, for the true value; the coverage factor is its ratio to `u_kj_per_mol` and differs from
+    /// value to value.
+    pub expanded_kj_per_mol: f64,
 }
 
 /// What a reported value rests on.
@@ -55,7 +58,7 @@ pub struct Comparison {
     /// Measured minus estimated, kJ/mol.
     pub difference_kj_per_mol: f64,
     /// Combined expanded uncertainty (95 %) of the difference, kJ/mol.
-    pub expanded_kj_per_mol: f64,
+    pub expanded_difference_kj_per_mol: f64,
     /// The verdict.
     pub agreement: Agreement,
     /// What the case file says when it settles a disagreement: by whom and why.
@@ -72,8 +75,6 @@ pub struct FormationEnthalpy {
     pub quantity: Quantity,
     /// What it rests on.
     pub basis: Basis,
-    /// Expanded uncertainty (95 %), kJ/mol.
-    pub expanded_kj_per_mol: f64,
     /// The estimate of the additivity; it leans on the molecule's own measurements where there are any and nobody asked to leave them out.
     pub estimate: Quantity,
     /// The molecule's own measurements beside the estimate made without them.
@@ -125,6 +126,8 @@ pub struct Strain {
     pub j_per_g: f64,
     /// Standard uncertainty per mass, J/g.
     pub u_j_per_g: f64,
+    /// Expanded uncertainty (95 %) per mass, J/g.
+    pub expanded_j_per_g: f64,
     /// Name of the convention.
     pub convention: &'static str,
     /// For a measured molecule: measured enthalpy minus the strain-free sum.
@@ -154,7 +157,7 @@ pub struct SubstanceReview {
     pub rings: Vec<Vec<usize>>,
     /// Plain-language warnings, most important first.
     pub flags: Vec<String>,
-    /// Where the structure was drawn in the input, Å, if it was.
+    /// The structure itself, for drawing.
     #[serde(skip)]
     pub structure: crate::structure::Structure,
 }

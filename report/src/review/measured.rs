@@ -43,10 +43,10 @@ pub(super) fn compare(
 ) -> Vec<Comparison> {
     let stated = case.iter().map(|m| {
         let measured = MeasuredEnthalpy {
-            quantity: Quantity {
-                value_kj_per_mol: m.value_kj_per_mol,
-                u_kj_per_mol: m.u_kj_per_mol.unwrap_or(UNSTATED_KJ_PER_MOL),
-            },
+            quantity: measured(
+                m.value_kj_per_mol,
+                m.u_kj_per_mol.unwrap_or(UNSTATED_KJ_PER_MOL),
+            ),
             source: m.source.clone(),
             from_case: true,
         };
@@ -55,10 +55,7 @@ pub(super) fn compare(
     let known = published.iter().map(|&index| {
         let row = &data.rows[index];
         let measured = MeasuredEnthalpy {
-            quantity: Quantity {
-                value_kj_per_mol: row.value_kj_per_mol,
-                u_kj_per_mol: row.u_kj_per_mol,
-            },
+            quantity: measured(row.value_kj_per_mol, row.u_kj_per_mol),
             source: row.measurement.source.clone(),
             from_case: false,
         };
@@ -87,70 +84,49 @@ fn comparison(
         measured,
         blind: quantity_of(without),
         difference_kj_per_mol: difference,
-        expanded_kj_per_mol: expanded,
+        expanded_difference_kj_per_mol: expanded,
         agreement,
         settled_by: settled.map(|s| s.reason.clone()),
         keeps_estimate: settled.is_some_and(|s| !s.keep_measured),
     }
 }
 
-/// The value that the review uses for a molecule with measured values.
-pub(super) struct Chosen {
-    /// The value.
-    pub quantity: Quantity,
-    /// What it rests on.
-    pub basis: Basis,
-    /// Expanded uncertainty (95 %), kJ/mol.
-    pub expanded_kj_per_mol: f64,
+/// A measured value, taken as normally distributed, since its source says no more.
+fn measured(value_kj_per_mol: f64, u_kj_per_mol: f64) -> Quantity {
+    Quantity {
+        value_kj_per_mol,
+        u_kj_per_mol,
+        expanded_kj_per_mol: COVERAGE_FACTOR * u_kj_per_mol,
+    }
 }
 
-impl Chosen {
-    /// Chooses; `None` without measured values.
-    ///
-    /// A value that somebody settled stands. Else, as long as every measured value agrees with the estimate made without them, the one of smallest uncertainty
-    /// (the case file's before published ones when equal). Else the highest enthalpy of formation among the measured values and
-    /// that estimate, which is the hazardous side.
-    pub(super) fn of(comparisons: &[Comparison], without: &Estimate) -> Option<Self> {
-        let settled = comparisons.iter().find(|c| c.settled_by.is_some());
-        if let Some(comparison) = settled {
-            return Some(if comparison.keeps_estimate {
-                Self::estimated(without)
-            } else {
-                Self::measured(comparison)
-            });
-        }
-        let surest = comparisons.iter().min_by(|a, b| {
-            let u = |c: &Comparison| c.measured.quantity.u_kj_per_mol;
-            u(a).total_cmp(&u(b))
-        })?;
-        if comparisons.iter().all(|c| c.agreement == Agreement::Agrees) {
-            return Some(Self::measured(surest));
-        }
-        let value = |c: &Comparison| c.measured.quantity.value_kj_per_mol;
-        let highest = comparisons
-            .iter()
-            .max_by(|a, b| value(a).total_cmp(&value(b)))?;
-        Some(if without.value_kj_per_mol > value(highest) {
-            Self::estimated(without)
+/// The value that the review uses for a molecule with measured values; `None` without any.
+///
+/// A value that somebody settled stands. Else, as long as every measured value agrees with the estimate made without them, the one of smallest uncertainty
+/// (the case file's before published ones when equal). Else the highest enthalpy of formation among the measured values and
+/// that estimate, which is the hazardous side.
+pub(super) fn choose(comparisons: &[Comparison], without: &Estimate) -> Option<(Quantity, Basis)> {
+    let estimated = (quantity_of(without), Basis::Estimated);
+    let measured = |c: &Comparison| (c.measured.quantity, Basis::Measured);
+    if let Some(settled) = comparisons.iter().find(|c| c.settled_by.is_some()) {
+        return Some(if settled.keeps_estimate {
+            estimated
         } else {
-            Self::measured(highest)
-        })
+            measured(settled)
+        });
     }
-
-    fn measured(comparison: &Comparison) -> Self {
-        let quantity = comparison.measured.quantity;
-        Self {
-            quantity,
-            basis: Basis::Measured,
-            expanded_kj_per_mol: COVERAGE_FACTOR * quantity.u_kj_per_mol,
-        }
+    let u = |c: &Comparison| c.measured.quantity.u_kj_per_mol;
+    let surest = comparisons.iter().min_by(|a, b| u(a).total_cmp(&u(b)))?;
+    if comparisons.iter().all(|c| c.agreement == Agreement::Agrees) {
+        return Some(measured(surest));
     }
-
-    fn estimated(without: &Estimate) -> Self {
-        Self {
-            quantity: quantity_of(without),
-            basis: Basis::Estimated,
-            expanded_kj_per_mol: without.expanded_kj_per_mol(),
-        }
-    }
+    let value = |c: &Comparison| c.measured.quantity.value_kj_per_mol;
+    let highest = comparisons
+        .iter()
+        .max_by(|a, b| value(a).total_cmp(&value(b)))?;
+    Some(if without.value_kj_per_mol > value(highest) {
+        estimated
+    } else {
+        measured(highest)
+    })
 }

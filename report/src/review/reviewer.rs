@@ -4,7 +4,9 @@ use std::collections::BTreeMap;
 use std::fmt;
 
 use tautring_core::additivity::gas::GAS;
-use tautring_core::additivity::{AdditivityError, Estimate, MAX_LEFT_OUT, Model, count, count_strain};
+use tautring_core::additivity::{
+    AdditivityError, Estimate, MAX_LEFT_OUT, Model, count, count_strain,
+};
 use tautring_core::oxygen_balance::oxygen_balance_percent;
 use tautring_core::quantities::KJ_PER_KCAL;
 use tautring_core::strain;
@@ -12,7 +14,7 @@ use tautring_core::strain;
 use super::findings::{
     Basis, Evidence, FormationEnthalpy, Quantity, RingStrain, Strain, SubstanceReview,
 };
-use super::measured::{CaseMeasurement, Chosen, compare, expanded_of_measured};
+use super::measured::{CaseMeasurement, choose, compare};
 use super::warnings;
 use crate::dataset::{Dataset, DatasetError, HostFeatures};
 use crate::structure::{HostMolecule, Structure, identity, skeleton};
@@ -86,8 +88,14 @@ impl Reviewer {
         let mut by_identity: BTreeMap<String, Vec<usize>> = BTreeMap::new();
         let mut by_skeleton: BTreeMap<String, Vec<usize>> = BTreeMap::new();
         for (index, row) in data.rows.iter().enumerate() {
-            by_identity.entry(row.identity.clone()).or_default().push(index);
-            by_skeleton.entry(row.skeleton.clone()).or_default().push(index);
+            by_identity
+                .entry(row.identity.clone())
+                .or_default()
+                .push(index);
+            by_skeleton
+                .entry(row.skeleton.clone())
+                .or_default()
+                .push(index);
         }
         Ok(Self {
             model: &GAS,
@@ -127,21 +135,16 @@ impl Reviewer {
         let left_out: &[usize] = if blind { own } else { &[] };
         let mut weights = self.workspace(own.len());
         let without = self.model.estimate_without(&features, own, &mut weights)?;
-        let estimate = self.model.estimate_without(&features, left_out, &mut weights)?;
+        let estimate = self
+            .model
+            .estimate_without(&features, left_out, &mut weights)?;
         let (evidence, evidence_share) = self.evidence(&weights);
 
         let published: &[usize] = if blind { &[] } else { same };
         let case = if blind { &[] } else { case };
         let comparisons = compare(&self.data, published, case, &without);
-        let chosen = Chosen::of(&comparisons, &without);
-        let (quantity, basis, expanded) = match &chosen {
-            Some(chosen) => (chosen.quantity, chosen.basis, chosen.expanded_kj_per_mol),
-            None => (
-                quantity_of(&estimate),
-                Basis::Estimated,
-                estimate.expanded_kj_per_mol(),
-            ),
-        };
+        let chosen = choose(&comparisons, &without);
+        let (quantity, basis) = chosen.unwrap_or((quantity_of(&estimate), Basis::Estimated));
 
         let strain = self.strain(molecule, &features, molar_mass, left_out, basis, quantity)?;
         let flags = warnings::of(
@@ -161,7 +164,6 @@ impl Reviewer {
             gas: FormationEnthalpy {
                 quantity,
                 basis,
-                expanded_kj_per_mol: expanded,
                 estimate: quantity_of(&estimate),
                 comparisons,
                 evidence,
@@ -197,7 +199,11 @@ impl Reviewer {
     /// [`ReviewError::Additivity`] when the structure is not one neutral organic molecule.
     pub fn strain_of(&self, structure: &Structure) -> Result<Estimate, ReviewError> {
         let features: HostFeatures = count(&structure.molecule)?;
-        Ok(strain::total(self.model, &features, &mut self.workspace(0))?)
+        Ok(strain::total(
+            self.model,
+            &features,
+            &mut self.workspace(0),
+        )?)
     }
 
     fn strain(
@@ -211,14 +217,16 @@ impl Reviewer {
     ) -> Result<Strain, ReviewError> {
         let mut workspace = self.workspace(left_out.len());
         let mut estimate = |features: &HostFeatures| {
-            self.model.estimate_without(features, left_out, &mut workspace)
+            self.model
+                .estimate_without(features, left_out, &mut workspace)
         };
         let total = quantity_of(&estimate(&strain::ring_part(features))?);
         let measured_minus_strain_free = if basis == Basis::Measured {
-            let free = estimate(&strain::strain_free_part(features))?;
+            let free = quantity_of(&estimate(&strain::strain_free_part(features))?);
             Some(Quantity {
                 value_kj_per_mol: enthalpy.value_kj_per_mol - free.value_kj_per_mol,
-                u_kj_per_mol: enthalpy.u_kj_per_mol.hypot(free.u_kj_per_mol()),
+                u_kj_per_mol: enthalpy.u_kj_per_mol.hypot(free.u_kj_per_mol),
+                expanded_kj_per_mol: enthalpy.expanded_kj_per_mol.hypot(free.expanded_kj_per_mol),
             })
         } else {
             None
@@ -239,7 +247,9 @@ impl Reviewer {
                 .collect();
             sizes.sort_unstable();
             ring_systems.push(RingStrain {
-                atoms: (0..molecule.atoms().len()).filter(|&a| in_system(a)).collect(),
+                atoms: (0..molecule.atoms().len())
+                    .filter(|&a| in_system(a))
+                    .collect(),
                 sizes,
                 quantity: quantity_of(&estimate(&counted)?),
             });
@@ -249,6 +259,7 @@ impl Reviewer {
             value_kcal_per_mol: total.value_kj_per_mol / KJ_PER_KCAL,
             j_per_g: 1000.0 * total.value_kj_per_mol / molar_mass,
             u_j_per_g: 1000.0 * total.u_kj_per_mol / molar_mass,
+            expanded_j_per_g: 1000.0 * total.expanded_kj_per_mol / molar_mass,
             convention: CONVENTION,
             measured_minus_strain_free,
             ring_systems,
@@ -260,7 +271,12 @@ impl Reviewer {
         let weights = &weights[..self.data.rows.len()];
         let total: f64 = weights.iter().map(|w| w.abs()).sum();
         let mut order: Vec<usize> = (0..weights.len()).collect();
-        order.sort_by(|&a, &b| weights[b].abs().total_cmp(&weights[a].abs()).then(a.cmp(&b)));
+        order.sort_by(|&a, &b| {
+            weights[b]
+                .abs()
+                .total_cmp(&weights[a].abs())
+                .then(a.cmp(&b))
+        });
         let mut listed = Vec::new();
         let mut carried = 0.0;
         for index in order {
@@ -287,10 +303,11 @@ impl Reviewer {
     }
 }
 
-/// An estimate's value with its standard uncertainty.
+/// An estimate's value with its uncertainty.
 pub(super) fn quantity_of(estimate: &Estimate) -> Quantity {
     Quantity {
         value_kj_per_mol: estimate.value_kj_per_mol,
         u_kj_per_mol: estimate.u_kj_per_mol(),
+        expanded_kj_per_mol: estimate.expanded_kj_per_mol(),
     }
 }

@@ -1,7 +1,7 @@
 //! The gas phase at 298.15 K: tables generated from `data/`.
 //!
 //! The factor is a file of little-endian numbers beside the Rust tables: as Rust text it would be some 15 megabytes that the compiler reads
-//! at every build.
+//! at every build. It is read in place.
 
 mod tables;
 
@@ -11,7 +11,7 @@ use super::model::Model;
 /// How many measurements the gas-phase model rests on.
 pub const MEASUREMENTS: usize = tables::VALUES.len();
 
-static FACTOR: [f64; packed_len(MEASUREMENTS)] = decode(include_bytes!("factor.bin"));
+static FACTOR: &[[u8; 8]] = words(include_bytes!("factor.bin"));
 
 /// The gas-phase model of enthalpies of formation at 298.15 K.
 pub static GAS: Model<'static> = Model {
@@ -22,24 +22,15 @@ pub static GAS: Model<'static> = Model {
     rows: &tables::ROWS,
     counts: &tables::COUNTS,
     values: &tables::VALUES,
-    factor: &FACTOR,
+    factor: FACTOR,
 };
 
-/// Numbers from their little-endian bytes; a file of another length does not compile.
-#[expect(clippy::indexing_slicing, reason = "evaluated by the compiler")]
-const fn decode<const N: usize>(bytes: &[u8]) -> [f64; N] {
-    assert!(bytes.len() == 8 * N, "factor.bin does not fit tables.rs");
-    let mut numbers = [0.0; N];
-    let mut i = 0;
-    while i < N {
-        let mut word = [0; 8];
-        let mut j = 0;
-        while j < 8 {
-            word[j] = bytes[8 * i + j];
-            j += 1;
-        }
-        numbers[i] = f64::from_le_bytes(word);
-        i += 1;
-    }
-    numbers
+/// The numbers of a table, each as its bytes; a file of another length does not compile.
+const fn words(bytes: &'static [u8]) -> &'static [[u8; 8]] {
+    let (words, rest) = bytes.as_chunks();
+    assert!(
+        words.len() == packed_len(MEASUREMENTS) && rest.is_empty(),
+        "factor.bin does not fit tables.rs"
+    );
+    words
 }

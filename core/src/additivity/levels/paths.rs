@@ -29,6 +29,33 @@ pub(super) fn geminal<const A: usize, const B: usize, const F: usize>(
     Ok(())
 }
 
+/// Counts pairs of atoms at the ends of paths of two and three bonds, in chains and rings alike.
+pub(super) fn next_nearest<const A: usize, const B: usize, const F: usize>(
+    skeleton: &Skeleton<A, B>,
+    features: &mut Features<F>,
+) -> Result<(), AdditivityError> {
+    let token = |site: Site| site.kind.element_token() << 4 | u64::from(site.hydrogens);
+    let key = |bonds: u64, first: Site, last: Site| {
+        let [low, high] = sorted(token(first), token(last));
+        Key::new(Level::NextNearest, &[bonds, low, high])
+    };
+    for (centre, _) in skeleton.sites() {
+        for (n, first) in skeleton.heavy_neighbours(centre) {
+            for (m, last) in skeleton.heavy_neighbours(centre) {
+                if n.atom < m.atom {
+                    features.add(key(2, first, last), 1.0)?;
+                }
+            }
+        }
+    }
+    for (_, ends, _) in skeleton.bonds() {
+        for [first, _, _, last] in paths(skeleton, ends, |_| true) {
+            features.add(key(3, first, last), 1.0)?;
+        }
+    }
+    Ok(())
+}
+
 /// Counts pairs of atoms three bonds apart across bonds that are in no ring.
 pub(super) fn vicinal<const A: usize, const B: usize, const F: usize>(
     skeleton: &Skeleton<A, B>,
