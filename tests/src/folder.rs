@@ -4,6 +4,9 @@ use std::fs;
 use std::path::{Path, PathBuf};
 
 /// Top folder of the project.
+///
+/// # Panics
+/// Never: the package lies in it.
 pub fn top() -> PathBuf {
     Path::new(env!("CARGO_MANIFEST_DIR"))
         .parent()

@@ -7,7 +7,7 @@ use std::fs;
 
 use serde::Deserialize;
 use tautring_report::structure::{HostMolecule, Structure, identity};
-use tautring_tests::features::fingerprint;
+use tautring_tests::features::{estimate, fingerprint};
 use tautring_tests::folder::{reference, top};
 use tautring_tests::random::XorShift;
 use tautring_tests::renumber::renumber;
@@ -27,7 +27,8 @@ struct Measurement {
 struct Spelling {
     smiles: String,
     kind: String,
-    spelling: String,
+    #[serde(rename = "spelling")]
+    respelled: String,
 }
 
 fn measured() -> BTreeSet<String> {
@@ -63,7 +64,7 @@ fn every_measured_molecule_is_spelled_anew() {
     );
     let mut kinds: BTreeMap<String, usize> = BTreeMap::new();
     for row in spellings() {
-        *kinds.entry(row.kind).or_default() += usize::from(row.spelling != row.smiles);
+        *kinds.entry(row.kind).or_default() += usize::from(row.respelled != row.smiles);
     }
     println!("spellings that differ from the given one: {kinds:?}");
     assert!(kinds["nitro"] > 50 && kinds["kekule"] > 1000);
@@ -100,13 +101,16 @@ fn any_order_of_the_atoms_gives_the_same_bits() {
 fn any_spelling_gives_the_same_bits() {
     let mut different = Vec::new();
     for row in spellings() {
-        let (Some(given), Some(respelled)) = (read(&row.smiles), read(&row.spelling)) else {
+        let (Some(given), Some(respelled)) = (read(&row.smiles), read(&row.respelled)) else {
             continue;
         };
+        // Equal features give equal uncertainties; one spelling in four is carried that far all the same.
+        let carried = row.kind == "order";
         if fingerprint(&given) != fingerprint(&respelled)
             || identity(&given) != identity(&respelled)
+            || carried && estimate(&given) != estimate(&respelled)
         {
-            different.push(format!("{}: {} {}", row.kind, row.smiles, row.spelling));
+            different.push(format!("{}: {} {}", row.kind, row.smiles, row.respelled));
         }
     }
     assert!(different.is_empty(), "{different:#?}");
