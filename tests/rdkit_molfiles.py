@@ -1,7 +1,7 @@
-#!/usr/bin/env python3
-"""Write the reference files of the structure readers with RDKit.
+"""Makes tests/reference/molfiles/, smiles_spellings.tsv and stereo_marks.tsv: what the structure readers are held to.
 
-    python3 tests/rdkit_molfiles.py tests/reference
+    python -m venv .venv && .venv/bin/pip install -r tests/requirements.txt
+    .venv/bin/python tests/rdkit_molfiles.py
 
 molfiles/*.mol: every molecule drawn flat as V2000 and V3000, and as a geometry with all hydrogens as V2000.
 smiles_spellings.tsv: key, then random spellings of the same molecule (other atom orders, Kekule form, written hydrogens).
@@ -13,6 +13,7 @@ import random
 import sys
 from pathlib import Path
 
+from measured_molecules import REFERENCE
 from rdkit import Chem, RDLogger, rdBase
 from rdkit.Chem import AllChem
 
@@ -90,7 +91,7 @@ def marks(smiles):
 
 def main():
     RDLogger.DisableLog("rdApp.*")
-    root = Path(sys.argv[1])
+    root = REFERENCE
     (root / "molfiles").mkdir(parents=True, exist_ok=True)
     rng = random.Random(1)
     header = f"# RDKit {rdBase.rdkitVersion}\n"

@@ -5,13 +5,13 @@
 //! ring bonds. Its zero is a hypothetical molecule of the same groups without rings. A strain energy without its convention means
 //! nothing: other conventions give other numbers.
 
-use crate::additivity::{AdditivityError, Estimate, Features, Model, count_strain};
+use crate::additivity::{AdditivityError, Estimate, Features, Level, Model, count_strain};
 use crate::molecule::Molecule;
 
 /// The ring part of counted features, whose enthalpy is the strain; the molecule's deviation from additivity belongs to it.
 #[must_use]
 pub fn ring_part<const F: usize>(features: &Features<F>) -> Features<F> {
-    features.only(|level| level.is_strain())
+    features.only(Level::is_strain)
 }
 
 /// The strain-free part of counted features: the increments of the groups, without any deviation.

@@ -22,17 +22,14 @@ fn propane_bend_of_common_practice() {
 }
 
 /// Angle term of MMFF94 (`halgren-1996`) as `RDKit` 2026.9 evaluates it on H2O, H2S, HCN and CO2, in
-/// `mechanics_mmff94_reference.csv` (made by the script of the same name).
+/// `tests/reference/bend_mmff94.csv`, made by `tests/rdkit_bend.py`.
 ///
 /// Tolerance: 2e-9 of the energy and of the largest gradient component; the reference holds the cubic constant
 /// to seven digits (-0.006981317 per degree), which is 1e-9 of it. Largest deviation seen: 3e-10.
 #[test]
 fn cubic_and_linear_bends_as_rdkit_has_them() {
     let mut rows = 0;
-    for line in include_str!("mechanics_mmff94_reference.csv")
-        .lines()
-        .skip(1)
-    {
+    for line in include_str!("../reference/bend_mmff94.csv").lines().skip(1) {
         let (smiles, numbers) = line.split_once(',').unwrap();
         let numbers: Vec<f64> = numbers.split(',').map(|n| n.parse().unwrap()).collect();
         let (constant, reference_deg, energy_kcal) = (numbers[0], numbers[1], numbers[2]);

@@ -5,6 +5,7 @@
 use std::collections::BTreeSet;
 
 use tautring_core::molecule::{Atom, BondOrder, Element, Molecule, MoleculeBuilder};
+use tautring_tests::random::XorShift;
 
 /// How often each molecule is renumbered.
 const ORDERS: u64 = 5;
@@ -132,7 +133,7 @@ fn aromaticity_is_that_of_rdkit() {
 #[test]
 fn any_atom_order_and_kekule_structure_gives_the_same_rings_and_aromatic_atoms() {
     println!("seed {SEED:#x}");
-    let mut random = XorShift(SEED);
+    let mut random = XorShift::new(SEED);
     for row in reference() {
         let original = molecule(&row.atoms, &row.bonds);
         let rings = ring_sets(&original, |atom| atom);
@@ -203,28 +204,10 @@ fn shift_double_bonds(
         let alternate = orders.len() % 2 == 0
             && orders.iter().all(|&order| order != BondOrder::Triple)
             && (0..orders.len()).all(|k| orders[k] != orders[(k + 1) % orders.len()]);
-        if alternate && random.next().is_multiple_of(2) {
+        if alternate && random.coin() {
             for (k, bond) in around.iter().enumerate() {
                 bonds[*bond].2 = orders[(k + 1) % orders.len()];
             }
-        }
-    }
-}
-
-struct XorShift(u64);
-
-impl XorShift {
-    fn next(&mut self) -> u64 {
-        self.0 ^= self.0 << 13;
-        self.0 ^= self.0 >> 7;
-        self.0 ^= self.0 << 17;
-        self.0
-    }
-
-    fn shuffle<T>(&mut self, items: &mut [T]) {
-        for last in (1..items.len()).rev() {
-            let other = (self.next() % (last as u64 + 1)) as usize;
-            items.swap(last, other);
         }
     }
 }

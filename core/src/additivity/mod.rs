@@ -1,6 +1,6 @@
 //! Additivity: enthalpies of formation as a linear model of counted features, with a full covariance.
 //!
-//! y = Σ over levels l of X_l β_l + δ + ε, with β_l ~ N(0, τ_l² I) (correlated between neighbouring ring sizes in the
+//! `y = Σ over levels l of X_l β_l + δ + ε`, with `β_l ~ N(0, τ_l² I)` (correlated between neighbouring ring sizes in the
 //! smooth levels), δ a heavy-tailed deviation of the molecule and ε the heavy-tailed error of a measurement.
 
 pub mod cholesky;

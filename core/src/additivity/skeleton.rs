@@ -18,7 +18,7 @@ impl AtomType {
     fn of<const A: usize, const B: usize>(
         molecule: &Molecule<A, B>,
         index: usize,
-        atom: &Atom,
+        atom: Atom,
     ) -> Self {
         let mut partners = [0_u16; 2];
         let mut triple = 0;
@@ -106,7 +106,7 @@ impl<'m, const A: usize, const B: usize> Skeleton<'m, A, B> {
             .enumerate()
             .map(|(index, atom)| {
                 (atom.element != Element::H).then(|| Site {
-                    kind: AtomType::of(molecule, index, atom),
+                    kind: AtomType::of(molecule, index, *atom),
                     hydrogens: molecule.total_hydrogens(index),
                     degree: 0,
                     rings: 0,

@@ -7,7 +7,7 @@ use super::{MolarMass, SpecificEnergy};
 /// Kilojoules in a thermochemical kilocalorie, exact.
 ///
 /// # Source
-/// `iupac-green-book`, section 7.2.
+/// `green-book-2007`, section 7.2.
 pub const KJ_PER_KCAL: f64 = 4.184;
 
 /// Molar energy or enthalpy.

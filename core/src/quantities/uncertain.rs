@@ -8,7 +8,7 @@ use super::{MolarEnergy, QuantityError};
 /// holds the covariance forms it.
 ///
 /// # Source
-/// `jcgm-100`, 2.3.1.
+/// `gum-2008`, 2.3.1.
 #[derive(Clone, Copy, Debug, PartialEq)]
 #[cfg_attr(feature = "serde", derive(serde::Serialize))]
 pub struct Uncertain {

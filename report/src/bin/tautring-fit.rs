@@ -110,7 +110,10 @@ fn starting_prior(arguments: &Arguments) -> Result<Prior, Box<dyn Error>> {
         let level = Level::ALL.into_iter().find(|level| level.name() == name);
         let level = level.ok_or_else(|| {
             let known: Vec<&str> = Level::ALL.iter().map(|level| level.name()).collect();
-            format!("there is no level `{name}`; there are: {}", known.join(", "))
+            format!(
+                "there is no level `{name}`; there are: {}",
+                known.join(", ")
+            )
         })?;
         tau[level as usize] = 0.0;
     }

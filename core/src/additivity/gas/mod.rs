@@ -3,6 +3,10 @@
 //! The factor is a file of little-endian numbers beside the Rust tables: as Rust text it would be some 15 megabytes that the compiler reads
 //! at every build. It is read in place.
 
+#[expect(
+    clippy::unreadable_literal,
+    reason = "generated: the shortest decimals that give the same bits"
+)]
 mod tables;
 
 use super::cholesky::packed_len;

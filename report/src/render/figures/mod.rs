@@ -9,6 +9,7 @@ mod cage;
 mod canvas;
 mod clearance;
 mod crowding;
+mod figure;
 mod labels;
 mod layout;
 mod overlap;
@@ -17,22 +18,4 @@ mod strain_plot;
 mod structure;
 
 pub(super) use canvas::escaped;
-
-use crate::document::{Drawing, Figure};
-
-/// A figure as SVG for a page that sets the colours.
-pub fn svg(figure: &Figure) -> String {
-    drawn(figure).inline(&figure.id, &figure.alternative)
-}
-
-/// A figure as a file of its own, on paper of its own.
-pub fn svg_file(figure: &Figure) -> String {
-    drawn(figure).file(&figure.id, &figure.alternative)
-}
-
-fn drawn(figure: &Figure) -> canvas::Canvas {
-    match &figure.drawing {
-        Drawing::Structure(drawing) => structure::draw(drawing),
-        Drawing::StrainPlot(plot) => strain_plot::draw(plot),
-    }
-}
+pub use figure::{svg, svg_file};
