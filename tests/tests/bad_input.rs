@@ -34,7 +34,7 @@ fn bad_structures() -> Vec<(String, &'static str)> {
         ("", "empty"),
         ("   ", "empty"),
         ("C1CC", "ring"),
-        ("C(C", "parenthes"),
+        ("C(C", "'('"),
         ("C1CQ1", "Q"),
         ("[Xx]", "Xx"),
         ("C[Hg]C", "Hg"),
