@@ -25,8 +25,8 @@ pub enum Level {
     GeminalElements,
     /// Pairs of atoms two bonds apart, with the atom between.
     Geminal,
-    /// Pairs of atoms two and three bonds apart, by element and hydrogens.
-    NextNearest,
+    /// Pairs of atoms one, two and three bonds apart, by element, neighbours and hydrogens.
+    NearPair,
     /// Pairs of atoms three bonds apart across a bond that is in no aromatic ring, by class.
     VicinalElements,
     /// Pairs of atoms three bonds apart across a bond that is in no aromatic ring.
@@ -67,7 +67,7 @@ impl Level {
         Self::Group,
         Self::GeminalElements,
         Self::Geminal,
-        Self::NextNearest,
+        Self::NearPair,
         Self::VicinalElements,
         Self::Vicinal,
         Self::OneFive,
@@ -95,7 +95,7 @@ impl Level {
             Self::Group => "group",
             Self::GeminalElements => "geminal elements",
             Self::Geminal => "geminal pair",
-            Self::NextNearest => "next-nearest pair",
+            Self::NearPair => "near pair",
             Self::VicinalElements => "vicinal elements",
             Self::Vicinal => "vicinal pair",
             Self::OneFive => "1,5 contact",

@@ -101,11 +101,18 @@ fn read(root: &Path, path: &str) -> Result<String, Box<dyn Error>> {
 
 /// Where the search starts.
 ///
-/// Few measurements are needed to move a level from here. One level stays where it is as long as no measurement speaks of it:
+/// Orders of magnitude: what an element, a bond, a group and a ring bring. One level stays where it is as long as no measurement speaks of it:
 /// the configuration of ring bonds, whose 50 kJ/mol are the order of what trans double bonds cost in rings of eight.
 fn starting_prior(arguments: &Arguments) -> Result<Prior, Box<dyn Error>> {
-    let mut tau = [3.0; Level::ALL.len()];
-    tau[Level::RingConfiguration as usize] = 50.0;
+    let mut tau = Level::ALL.map(|level| match level {
+        Level::Element => 80.0,
+        Level::BondOrder => 40.0,
+        Level::Atom | Level::BondElements | Level::Bond | Level::AromaticRing => 15.0,
+        Level::RingSize => 60.0,
+        Level::RingConfiguration => 50.0,
+        level if level.is_strain() => 6.0,
+        _ => 3.0,
+    });
     for name in &arguments.without {
         let level = Level::ALL.into_iter().find(|level| level.name() == name);
         let level = level.ok_or_else(|| {
@@ -120,7 +127,7 @@ fn starting_prior(arguments: &Arguments) -> Result<Prior, Box<dyn Error>> {
     Ok(Prior {
         tau_kj_per_mol: tau,
         ring_width: 0.25,
-        deviation_kj_per_mol: [1.0; CONTRIBUTIONS],
+        deviation_kj_per_mol: [2.0; CONTRIBUTIONS],
         degrees_of_freedom: arguments.degrees_of_freedom,
     })
 }

@@ -76,14 +76,14 @@ fn strain(review: &SubstanceReview, line: &mut impl FnMut(&str, String)) {
             rounded(strain.j_per_g, strain.expanded_j_per_g).interval()
         ),
     );
-    line(
-        "",
-        format!("sum of the ring levels ({})", strain.convention),
-    );
-    if let Some(measured) = strain.measured_minus_strain_free {
+    line("", format!("by {}", strain.convention));
+    if review.gas.basis == Basis::Measured {
         line(
             "",
-            format!("{}: measured minus strain-free sum", with_factor(measured)),
+            format!(
+                "{}: by the ring levels alone",
+                with_factor(strain.ring_levels)
+            ),
         );
     }
     if strain.ring_systems.len() > 1 {

@@ -77,7 +77,7 @@ impl Inputs {
 fn monocycle(reviewer: &Reviewer, size: usize) -> Option<RingReference> {
     let structure = Structure::from_smiles(&format!("C1{}1", "C".repeat(size - 1))).ok()?;
     let review = reviewer.review("", &structure, &[], false).ok()?;
-    let strain = review.strain.measured_minus_strain_free?;
+    let strain = review.strain.quantity;
     let used = |value: f64| value.to_bits() == review.gas.quantity.value_kj_per_mol.to_bits();
     let measured = review
         .gas

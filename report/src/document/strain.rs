@@ -6,7 +6,7 @@ use super::block::{Block, Column, Table};
 use super::inline::Inline;
 use super::report::heading;
 use super::rounding::{fixed, rounded, uncertainty};
-use crate::review::{Quantity, SubstanceReview};
+use crate::review::{Basis, Quantity, SubstanceReview};
 
 pub(super) fn blocks(review: &SubstanceReview) -> Vec<Block> {
     let strain = &review.strain;
@@ -23,15 +23,15 @@ pub(super) fn blocks(review: &SubstanceReview) -> Vec<Block> {
         return blocks;
     }
     blocks.push(table(review));
-    if let Some(measured) = strain.measured_minus_strain_free {
-        let [sum, measured] = [strain.quantity, measured]
+    if review.gas.basis == Basis::Measured {
+        let [sum, measured] = [strain.ring_levels, strain.quantity]
             .map(|q| rounded(q.value_kj_per_mol, q.expanded_kj_per_mol).interval());
         blocks.push(Block::Paragraph(
-            Inline::from("Two numbers for one strain, each ± U (95 %): ")
-                .strong(format!("{sum} kJ/mol"))
-                .text(" is the sum of the ring levels, in the table and the summary; ")
+            Inline::from("The total, ")
                 .strong(format!("{measured} kJ/mol"))
-                .text(" is the enthalpy of formation that this report uses, a measured one, minus the strain-free sum, and holds also what is peculiar to this molecule alone."),
+                .text(" (± U, 95 %), is the measured enthalpy of formation that this report uses, minus the strain-free sum. The ring levels of the additivity alone give ")
+                .strong(format!("{sum} kJ/mol"))
+                .text("; the difference is what is peculiar to this molecule, or an error of the measurement."),
         ));
     }
     blocks
@@ -59,8 +59,15 @@ fn table(review: &SubstanceReview) -> Block {
             )
         })
         .collect();
-    let total = [Inline::new().strong("Total"), Inline::from("—")];
-    rows.push(row(total, strain.quantity, mass));
+    let levels = [Inline::from("All, by the ring levels"), Inline::from("—")];
+    rows.push(row(levels, strain.ring_levels, mass));
+    if review.gas.basis == Basis::Measured {
+        let total = [
+            Inline::new().strong("Total, from the measured enthalpy"),
+            Inline::from("—"),
+        ];
+        rows.push(row(total, strain.quantity, mass));
+    }
     Block::Table(Table {
         caption: "Strain per ring system and in total, gas phase, 298.15 K. U (95 %) is for the true value, k = U/u. Ring systems share uncertainty, so the u of the total is not the root of the sum of squares.".into(),
         columns: vec![

@@ -25,7 +25,7 @@ fn table(inputs: &Inputs) -> Block {
         .map(|entry| {
             let Ok(review) = &entry.finding else {
                 let mut row = vec![Inline::from(entry.particulars.substance.as_str())];
-                row.extend((0..7).map(|_| Inline::from("—")));
+                row.extend((0..6).map(|_| Inline::from("—")));
                 row.push("not reviewed".into());
                 return row;
             };
@@ -43,10 +43,6 @@ fn table(inputs: &Inputs) -> Block {
                 Inline::from(review.name.as_str()),
                 subscripted(&review.formula).into(),
                 of_rings(rounded(strain.quantity.value_kj_per_mol, expanded)),
-                strain.measured_minus_strain_free.map_or_else(
-                    || "—".into(),
-                    |q| of_rings(rounded(q.value_kj_per_mol, q.expanded_kj_per_mol)),
-                ),
                 of_rings(rounded(strain.value_kcal_per_mol, expanded / KJ_PER_KCAL)),
                 of_rings(rounded(strain.j_per_g, strain.expanded_j_per_g)),
                 rounded(
@@ -61,12 +57,11 @@ fn table(inputs: &Inputs) -> Block {
         })
         .collect();
     Block::Table(Table {
-        caption: "Strain (sum of the ring levels; beside it, where a measured enthalpy of formation is used, that minus the strain-free sum) and gas-phase enthalpy of formation at 298.15 K, each with its expanded uncertainty U (95 %, for the true value). \"No ring\" means none that counts as strained: aromatic rings do not.".into(),
+        caption: "Strain (the enthalpy of formation beside it, measured or estimated, minus the strain-free sum) and gas-phase enthalpy of formation at 298.15 K, each with its expanded uncertainty U (95 %, for the true value). \"No ring\" means none that counts as strained: aromatic rings do not.".into(),
         columns: vec![
             Column::words("Substance"),
             Column::words("Formula"),
             Column::numbers("Strain ± U, kJ/mol"),
-            Column::numbers("From measured enthalpy ± U, kJ/mol"),
             Column::numbers("Strain ± U, kcal/mol"),
             Column::numbers("Strain ± U, J/g"),
             Column::numbers("Enthalpy of formation ± U, kJ/mol"),

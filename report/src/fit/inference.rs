@@ -166,7 +166,7 @@ impl Posterior {
 }
 
 /// Least deviation from additivity that one heavy atom brings, kJ/mol: elements of few measurements would else pass for exactly additive.
-const LEAST_DEVIATION_KJ_PER_MOL: f64 = 0.25;
+const LEAST_DEVIATION_KJ_PER_MOL: f64 = 0.1;
 
 /// Squared scale of the deviation of a molecule, kJ²/mol².
 fn squared_scale(data: &Dataset, members: &[usize], prior: &Prior) -> f64 {

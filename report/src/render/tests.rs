@@ -84,7 +84,7 @@ fn review(name: &str, smiles: &str, comparisons: Vec<Comparison>) -> SubstanceRe
             u_j_per_g: 31.0,
             expanded_j_per_g: 77.0,
             convention: "group increments, sum of the ring levels",
-            measured_minus_strain_free: Some(quantity(115.2, 1.0)),
+            ring_levels: quantity(115.2, 1.0),
             ring_systems: vec![RingStrain {
                 atoms,
                 sizes: rings.iter().map(Vec::len).collect(),

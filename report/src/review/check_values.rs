@@ -131,8 +131,10 @@ fn said(error: &ReviewError) -> String {
 }
 
 fn strain(reviewer: &Reviewer, smiles: &str) -> Result<f64, String> {
-    let estimate = reviewer.strain_of(&read(smiles)?).map_err(|e| said(&e))?;
-    Ok(estimate.value_kj_per_mol)
+    let review = reviewer
+        .review(smiles, &read(smiles)?, &[], false)
+        .map_err(|e| said(&e))?;
+    Ok(review.strain.quantity.value_kj_per_mol)
 }
 
 fn cycloalkane(reviewer: &Reviewer, size: usize) -> Result<f64, String> {

@@ -117,7 +117,8 @@ pub struct RingStrain {
 /// The strain of a molecule.
 #[derive(Clone, Debug, Serialize)]
 pub struct Strain {
-    /// Sum of the ring levels.
+    /// The enthalpy of formation that the review uses, minus the strain-free sum; without a measured one that is the sum of the ring
+    /// levels. Nothing for a molecule without a ring that counts as strained.
     #[serde(flatten)]
     pub quantity: Quantity,
     /// The same, kcal/mol (thermochemical).
@@ -130,9 +131,9 @@ pub struct Strain {
     pub expanded_j_per_g: f64,
     /// Name of the convention.
     pub convention: &'static str,
-    /// For a measured molecule: measured enthalpy minus the strain-free sum.
-    pub measured_minus_strain_free: Option<Quantity>,
-    /// The strain of each ring system.
+    /// Sum of the ring levels, which is the strain by the additivity alone.
+    pub ring_levels: Quantity,
+    /// The strain of each ring system, by the ring levels.
     pub ring_systems: Vec<RingStrain>,
 }
 

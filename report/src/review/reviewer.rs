@@ -20,10 +20,18 @@ use crate::dataset::{Dataset, DatasetError, HostFeatures};
 use crate::structure::{HostMolecule, Structure, identity, skeleton};
 
 /// Name of the convention of strain, as reports and JSON give it.
-const CONVENTION: &str = "group increments, gas, 298.15 K";
+const CONVENTION: &str =
+    "group increments: enthalpy of formation minus the strain-free sum, gas, 298.15 K";
 
 /// Share of the absolute weight that the listed evidence carries together.
 const EVIDENCE_SHARE: f64 = 0.8;
+
+/// The strain of a molecule without rings that count as strained: nothing, by definition.
+const NOTHING: Quantity = Quantity {
+    value_kj_per_mol: 0.0,
+    u_kj_per_mol: 0.0,
+    expanded_kj_per_mol: 0.0,
+};
 
 /// The published measurements, one row each, as the model was fitted to them.
 const MEASUREMENTS: &str = include_str!("../../../data/measurements.csv");
@@ -193,19 +201,6 @@ impl Reviewer {
         Ok(self.model.estimate(&total, &mut self.workspace(0))?)
     }
 
-    /// The strain of a molecule by the ring levels.
-    ///
-    /// # Errors
-    /// [`ReviewError::Additivity`] when the structure is not one neutral organic molecule.
-    pub fn strain_of(&self, structure: &Structure) -> Result<Estimate, ReviewError> {
-        let features: HostFeatures = count(&structure.molecule)?;
-        Ok(strain::total(
-            self.model,
-            &features,
-            &mut self.workspace(0),
-        )?)
-    }
-
     fn strain(
         &self,
         molecule: &HostMolecule,
@@ -219,17 +214,6 @@ impl Reviewer {
         let mut estimate = |features: &HostFeatures| {
             self.model
                 .estimate_without(features, left_out, &mut workspace)
-        };
-        let total = quantity_of(&estimate(&strain::ring_part(features))?);
-        let measured_minus_strain_free = if basis == Basis::Measured {
-            let free = quantity_of(&estimate(&strain::strain_free_part(features))?);
-            Some(Quantity {
-                value_kj_per_mol: enthalpy.value_kj_per_mol - free.value_kj_per_mol,
-                u_kj_per_mol: enthalpy.u_kj_per_mol.hypot(free.u_kj_per_mol),
-                expanded_kj_per_mol: enthalpy.expanded_kj_per_mol.hypot(free.expanded_kj_per_mol),
-            })
-        } else {
-            None
         };
         let systems = molecule.ring_systems();
         let mut ring_systems = Vec::new();
@@ -254,6 +238,21 @@ impl Reviewer {
                 quantity: quantity_of(&estimate(&counted)?),
             });
         }
+        let ring_levels = if ring_systems.is_empty() {
+            NOTHING
+        } else {
+            quantity_of(&estimate(&strain::ring_part(features))?)
+        };
+        let total = if basis == Basis::Measured && !ring_systems.is_empty() {
+            let free = quantity_of(&estimate(&strain::strain_free_part(features))?);
+            Quantity {
+                value_kj_per_mol: enthalpy.value_kj_per_mol - free.value_kj_per_mol,
+                u_kj_per_mol: enthalpy.u_kj_per_mol.hypot(free.u_kj_per_mol),
+                expanded_kj_per_mol: enthalpy.expanded_kj_per_mol.hypot(free.expanded_kj_per_mol),
+            }
+        } else {
+            ring_levels
+        };
         Ok(Strain {
             quantity: total,
             value_kcal_per_mol: total.value_kj_per_mol / KJ_PER_KCAL,
@@ -261,7 +260,7 @@ impl Reviewer {
             u_j_per_g: 1000.0 * total.u_kj_per_mol / molar_mass,
             expanded_j_per_g: 1000.0 * total.expanded_kj_per_mol / molar_mass,
             convention: CONVENTION,
-            measured_minus_strain_free,
+            ring_levels,
             ring_systems,
         })
     }

@@ -25,7 +25,7 @@ pub fn count<const A: usize, const B: usize, const F: usize>(
     composition::count(&skeleton, &mut features)?;
     groups::count(&skeleton, &mut features)?;
     paths::geminal(&skeleton, &mut features)?;
-    paths::next_nearest(&skeleton, &mut features)?;
+    paths::near_pairs(&skeleton, &mut features)?;
     paths::vicinal(&skeleton, &mut features)?;
     contacts::count(&skeleton, &mut features)?;
     aromatic::count(&skeleton, &mut features)?;

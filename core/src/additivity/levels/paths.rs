@@ -30,15 +30,19 @@ pub(super) fn geminal<const A: usize, const B: usize, const F: usize>(
     Ok(())
 }
 
-/// Counts pairs of atoms at the ends of paths of two and three bonds, in chains and rings alike.
-pub(super) fn next_nearest<const A: usize, const B: usize, const F: usize>(
+/// Counts pairs of atoms at the ends of paths of one, two and three bonds, in chains and rings alike.
+pub(super) fn near_pairs<const A: usize, const B: usize, const F: usize>(
     skeleton: &Skeleton<A, B>,
     features: &mut Features<F>,
 ) -> Result<(), AdditivityError> {
-    let token = |site: Site| site.kind.element_token() << 4 | u64::from(site.hydrogens);
+    let token = |site: Site| {
+        let aromatic = u64::from(site.aromatic_rings > 0);
+        let [degree, hydrogens] = [site.degree, site.hydrogens].map(u64::from);
+        site.kind.element_token() << 9 | aromatic << 8 | degree << 4 | hydrogens
+    };
     let key = |bonds: u64, first: Site, last: Site| {
         let [low, high] = sorted(token(first), token(last));
-        Key::new(Level::NextNearest, &[bonds, low, high])
+        Key::new(Level::NearPair, &[bonds, low, high])
     };
     for (centre, _) in skeleton.sites() {
         for (n, first) in skeleton.heavy_neighbours(centre) {
@@ -49,7 +53,8 @@ pub(super) fn next_nearest<const A: usize, const B: usize, const F: usize>(
             }
         }
     }
-    for (_, ends, _) in skeleton.bonds() {
+    for (_, ends, [first, last]) in skeleton.bonds() {
+        features.add(key(1, first, last), 1.0)?;
         for Path {
             sites: [first, _, _, last],
             ..
