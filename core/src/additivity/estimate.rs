@@ -61,10 +61,10 @@ impl Estimate {
 /// A polynomial in the reciprocal of the degrees of freedom.
 ///
 /// # Accuracy
-/// Better than 4 in 10 million from two degrees of freedom to infinity, against the quantiles of SciPy 1.16 to which it was fitted.
+/// Better than 4 in 10 million from two degrees of freedom to infinity, against the quantiles of `scipy.stats.t` to which it was fitted.
 fn student_quantile(degrees_of_freedom: f64) -> f64 {
     const COEFFICIENTS: [f64; 7] = [
-        1.959_964_725_208_040,
+        1.959_964_725_208_04,
         2.372_190_053_298_324,
         2.824_602_610_409_485,
         2.534_045_484_402_069,

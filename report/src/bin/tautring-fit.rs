@@ -66,14 +66,14 @@ fn run(arguments: &Arguments) -> Result<ExitCode, Box<dyn Error>> {
             eprintln!("round {round} of {rounds}: ln L = {likelihood:.2}");
         }
     })?;
-    let errors = leave_out(&data, &posterior);
+    let errors = leave_out(&data, &posterior)?;
     let summary = describe(&data, &errors);
     print!("{summary}");
     if !arguments.without.is_empty() {
         return Ok(ExitCode::SUCCESS);
     }
     let hyperparameters = toml::to_string(&Hyperparameters::of(&posterior.prior))?;
-    let tables = Tables::new(&data, posterior)?;
+    let tables = Tables::new(&data, &posterior)?;
     let files = [
         (HYPERPARAMETERS, hyperparameters.into_bytes()),
         (LEFT_OUT, left_out_csv(&data, &errors).into_bytes()),

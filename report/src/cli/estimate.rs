@@ -126,7 +126,7 @@ fn complaint(given: &Given, reason: &str) -> String {
         .structure
         .as_ref()
         .err()
-        .and_then(|error| error.span());
+        .and_then(StructureError::span);
     let marked = span.and_then(|span| {
         let before = given.input.get(..span.start)?.chars().count();
         let marked = given.input.get(span)?.chars().count().max(1);

@@ -75,7 +75,7 @@ impl Posterior {
     fn new(
         data: &Dataset,
         matrices: &LevelMatrices,
-        prior: Prior,
+        prior: &Prior,
         weights: &Weights,
     ) -> Result<Self, AdditivityError> {
         let n = data.rows.len();
@@ -92,7 +92,7 @@ impl Posterior {
             .molecules
             .iter()
             .zip(&data.molecules)
-            .map(|(w, rows)| squared_scale(data, rows, &prior) / w)
+            .map(|(w, rows)| squared_scale(data, rows, prior) / w)
             .collect();
         let error_variance: Vec<f64> = data
             .rows
@@ -121,7 +121,7 @@ impl Posterior {
             -0.5 * (fit + log_determinant + n as f64 * (2.0 * std::f64::consts::PI).ln());
         let inverse = invert(&factor, n);
         Ok(Self {
-            prior,
+            prior: *prior,
             factor,
             alpha,
             inverse,
@@ -214,7 +214,7 @@ pub fn search(
     let mut prior = start;
     let mut weights = Weights::equal(data);
     for round in 0..rounds {
-        let posterior = Posterior::new(data, matrices, prior, &weights)?;
+        let posterior = Posterior::new(data, matrices, &prior, &weights)?;
         progress(round, &posterior);
         for (tau, matrix) in prior.tau_kj_per_mol.iter_mut().zip(&matrices.by_level) {
             let trace = trace_of_product(&posterior.inverse, matrix, n);
@@ -250,5 +250,5 @@ pub fn search(
         }
         weights = posterior.weights(data);
     }
-    Posterior::new(data, matrices, prior, &weights)
+    Posterior::new(data, matrices, &prior, &weights)
 }

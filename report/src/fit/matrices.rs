@@ -53,12 +53,8 @@ pub(super) fn invert(factor: &[f64], n: usize) -> Vec<f64> {
     std::thread::scope(|scope| {
         for _ in 0..threads {
             scope.spawn(|| {
-                loop {
-                    let Some((index, chunk_columns)) =
-                        work.lock().ok().and_then(|mut queue| queue.next())
-                    else {
-                        break;
-                    };
+                let next = || work.lock().ok()?.next();
+                while let Some((index, chunk_columns)) = next() {
                     for (offset, column) in chunk_columns.iter_mut().enumerate() {
                         let j = index * chunk + offset;
                         let mut b = vec![0.0; n];

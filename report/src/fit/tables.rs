@@ -44,7 +44,7 @@ impl Tables {
     ///
     /// # Errors
     /// A count that is no whole number up to 255.
-    pub fn new(data: &Dataset, posterior: Posterior) -> Result<Self, TableError> {
+    pub fn new(data: &Dataset, posterior: &Posterior) -> Result<Self, TableError> {
         let mut columns: BTreeMap<Key, Vec<(u16, u8)>> = BTreeMap::new();
         for (i, row) in data.rows.iter().enumerate() {
             for term in row.features.terms() {

@@ -2,7 +2,7 @@
 
 use std::fmt::Write as _;
 
-use tautring_core::additivity::{Estimate, Level, cholesky};
+use tautring_core::additivity::{AdditivityError, Estimate, Level, cholesky};
 use tautring_core::molecule::Element;
 
 use super::inference::{Posterior, entry};
@@ -37,59 +37,50 @@ impl LeftOut {
 
 /// Predicts each measurement without all measurements of its constitution.
 ///
-/// With S the left-out rows, measured minus predicted is (K⁻¹_SS)⁻¹ α_S and its covariance (K⁻¹_SS)⁻¹. The weights of the heavy
+/// With S the left-out rows, measured minus predicted is `(K⁻¹_SS)⁻¹ α_S` and its covariance `(K⁻¹_SS)⁻¹`. The weights of the heavy
 /// tails and the prior are those of all measurements.
-pub fn leave_out(data: &Dataset, posterior: &Posterior) -> Vec<LeftOut> {
+///
+/// # Errors
+/// [`AdditivityError::NotPositiveDefinite`] when rounding has spoilt a block of the inverse.
+pub fn leave_out(data: &Dataset, posterior: &Posterior) -> Result<Vec<LeftOut>, AdditivityError> {
     let prior = &posterior.prior;
-    let mut result: Vec<LeftOut> = data
-        .constitutions
-        .iter()
-        .flat_map(|set| {
-            let m = set.len();
-            let mut block = Vec::with_capacity(cholesky::packed_len(m));
-            for (at, &i) in set.iter().enumerate() {
-                block.extend(set[..=at].iter().map(|&j| posterior.inverse[entry(i, j)]));
-            }
-            let positive = cholesky::factorise(&mut block).is_ok();
-            assert!(
-                positive,
-                "a diagonal block of a positive definite matrix is positive definite"
-            );
-            let solve = |mut b: Vec<f64>| {
-                cholesky::solve_lower(&block, &mut b);
-                cholesky::solve_upper(&block, &mut b);
-                b
+    let mut result = Vec::with_capacity(data.rows.len());
+    for set in &data.constitutions {
+        let mut block = Vec::with_capacity(cholesky::packed_len(set.len()));
+        for (at, &i) in set.iter().enumerate() {
+            block.extend(set[..=at].iter().map(|&j| posterior.inverse[entry(i, j)]));
+        }
+        cholesky::factorise(&mut block)?;
+        let solve = |mut b: Vec<f64>| {
+            cholesky::solve_lower(&block, &mut b);
+            cholesky::solve_upper(&block, &mut b);
+            b
+        };
+        let errors = solve(set.iter().map(|&i| posterior.alpha[i]).collect());
+        for (at, (&row, &error)) in set.iter().zip(&errors).enumerate() {
+            let mut unit = vec![0.0; set.len()];
+            unit[at] = 1.0;
+            let total = solve(unit)[at];
+            let measurement = &data.rows[row];
+            let model = total
+                - posterior.error_variance[row]
+                - posterior.deviation_variance[measurement.molecule];
+            let estimate = Estimate {
+                value_kj_per_mol: measurement.value_kj_per_mol - error,
+                model_variance: model.max(0.0),
+                tail_variance: prior.squared_scale(measurement.features.deviation()),
+                tail_degrees_of_freedom: prior.degrees_of_freedom,
             };
-            let errors = solve(set.iter().map(|&i| posterior.alpha[i]).collect());
-            (0..m)
-                .map(|at| {
-                    let row = set[at];
-                    let mut unit = vec![0.0; m];
-                    unit[at] = 1.0;
-                    let total = solve(unit)[at];
-                    let molecule = data.rows[row].molecule;
-                    let model = total
-                        - posterior.error_variance[row]
-                        - posterior.deviation_variance[molecule];
-                    let measurement = &data.rows[row];
-                    let estimate = Estimate {
-                        value_kj_per_mol: measurement.value_kj_per_mol - errors[at],
-                        model_variance: model.max(0.0),
-                        tail_variance: prior.squared_scale(measurement.features.deviation()),
-                        tail_degrees_of_freedom: prior.degrees_of_freedom,
-                    };
-                    LeftOut {
-                        row,
-                        error_kj_per_mol: errors[at],
-                        estimate,
-                        new_measurement: estimate.of_measurement(measurement.u_kj_per_mol),
-                    }
-                })
-                .collect::<Vec<_>>()
-        })
-        .collect();
+            result.push(LeftOut {
+                row,
+                error_kj_per_mol: error,
+                estimate,
+                new_measurement: estimate.of_measurement(measurement.u_kj_per_mol),
+            });
+        }
+    }
     result.sort_by_key(|l| l.row);
-    result
+    Ok(result)
 }
 
 /// Errors of a set of left-out measurements.

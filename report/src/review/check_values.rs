@@ -33,7 +33,8 @@ struct Published {
     kind: String,
     quantity: String,
     molecule_or_reaction: String,
-    published: f64,
+    #[serde(rename = "published")]
+    value: f64,
     unit: String,
     tolerance: f64,
     tolerance_reason: String,
@@ -102,12 +103,12 @@ fn recompute(reviewer: &Reviewer, published: &Published) -> Result<CheckValue, S
     };
     let value = computed.value / factor;
     let tolerance = published.tolerance.hypot(computed.expanded / factor);
-    let agrees = (value - published.published).abs() <= tolerance;
+    let agrees = (value - published.value).abs() <= tolerance;
     Ok(CheckValue {
         id: published.id.clone(),
         quantity: published.quantity.clone(),
         subject: subject.to_owned(),
-        published: published.published,
+        published: published.value,
         unit: published.unit.clone(),
         computed: value,
         tolerance,
