@@ -26,6 +26,7 @@ id = "ring"
 name = "cyclobutane"
 smiles = "C1CCC1"
 state = "gas"
+role = "reference"
 "#;
 
 /// A structure and a word that its error must have.

@@ -25,27 +25,22 @@ impl Estimate {
         sqrt(self.model_variance + self.tail_variance)
     }
 
-    /// Effective degrees of freedom: ν (σ² + s²)² / s⁴ for a normal variance σ² and a squared scale s² with ν degrees of freedom.
-    ///
-    /// # Source
-    /// `gum-2008`, equation G.2b (Welch and Satterthwaite).
-    pub fn degrees_of_freedom(&self) -> f64 {
-        let total = self.model_variance + self.tail_variance;
-        let ratio = total / self.tail_variance;
-        self.tail_degrees_of_freedom * ratio * ratio
-    }
-
-    /// Coverage factor of the 95 % interval: Student's quantile for the effective degrees of freedom.
-    ///
-    /// # Source
-    /// `gum-2008`, G.3.2.
-    pub fn coverage_factor(&self) -> f64 {
-        student_quantile(self.degrees_of_freedom())
-    }
-
     /// Expanded uncertainty (95 %) of the true value, kJ/mol.
+    ///
+    /// `U² = (z σ)² + (t s)²`, with the 95 % quantiles z of the normal and t of Student's distribution. It never grows when a measurement
+    /// is added, which the effective degrees of freedom of `gum-2008`, G.4, do not promise for so few degrees of freedom.
+    ///
+    /// # Accuracy
+    /// Within 2 % of the quantile of the sum of both, by simulation for two degrees of freedom and σ from 0 to 8 s.
     pub fn expanded_kj_per_mol(&self) -> f64 {
-        self.coverage_factor() * self.u_kj_per_mol()
+        let normal = student_quantile(f64::INFINITY);
+        let tail = student_quantile(self.tail_degrees_of_freedom);
+        sqrt(normal * normal * self.model_variance + tail * tail * self.tail_variance)
+    }
+
+    /// Coverage factor of the 95 % interval, U/u.
+    pub fn coverage_factor(&self) -> f64 {
+        self.expanded_kj_per_mol() / self.u_kj_per_mol()
     }
 
     /// The same estimate as a prediction of a measurement with a standard uncertainty of its own, kJ/mol.

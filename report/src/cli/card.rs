@@ -3,7 +3,9 @@
 use tautring_core::quantities::KJ_PER_KCAL;
 use tautring_report::document::rounding::{fixed, rounded};
 use tautring_report::document::subscripted;
-use tautring_report::review::{Agreement, Basis, Comparison, Quantity, SubstanceReview};
+use tautring_report::review::{
+    Agreement, Basis, Comparison, Quantity, SubstanceReview, TELLING_KJ_PER_MOL,
+};
 
 /// What the signs mean; stands once under all cards.
 pub(super) const LEGEND: &str = "\
@@ -145,6 +147,9 @@ fn compared(comparison: &Comparison) -> String {
     let measured = &comparison.measured;
     let blind = comparison.blind;
     let verdict = match comparison.agreement {
+        Agreement::Agrees if comparison.expanded_difference_kj_per_mol > TELLING_KJ_PER_MOL => {
+            "not told apart, the estimate alone is too uncertain"
+        }
         Agreement::Agrees => "they agree",
         Agreement::Disagrees => "they DISAGREE",
         Agreement::Settled => "settled",

@@ -64,7 +64,7 @@ fn lines(check: &CheckValue) -> String {
     };
     let number = |value: f64| rounded(value, check.tolerance).value;
     format!(
-        "{verdict:<7} {}: {}\n  published {:>9}   recomputed {:>9}   difference {:>7}   tolerance {:>6} {}\n  tolerance: {}\n  source: {} ({})",
+        "{verdict:<7} {}: {}\n  published {:>9}   recomputed {:>9}   difference {:>7}   tolerance {:>6} {}\n  tolerance: {}\n  source: {}",
         check.quantity,
         check.subject,
         as_published(check.published),
@@ -73,11 +73,15 @@ fn lines(check: &CheckValue) -> String {
         uncertainty(check.tolerance),
         check.unit,
         check.tolerance_reason,
-        check.source,
-        match check.source_seen.as_str() {
-            "" => "no printed source",
-            "yes" => "seen",
-            other => other,
-        }
+        source(check)
     )
+}
+
+/// The source of a check value and how it was seen, such as `goldbook-s06037 (seen)` or `common practice`.
+fn source(check: &CheckValue) -> String {
+    match (check.source.as_str(), check.source_seen.as_str()) {
+        ("", seen) => seen.to_owned(),
+        (key, "yes") => format!("{key} (seen)"),
+        (key, seen) => format!("{key} ({seen})"),
+    }
 }

@@ -5,7 +5,7 @@ use tautring_core::additivity::gas::GAS;
 use super::entry::Entry;
 use super::inputs::{Digest, Header, Inputs, RingReference};
 use crate::case::{Case, StructureSource};
-use crate::review::{Basis, CheckValueError, Reviewer, check_values};
+use crate::review::{Agreement, Basis, CheckValueError, Reviewer, check_values};
 use crate::structure::Structure;
 
 /// Sizes of the measured cycloalkanes that may stand behind the plot.
@@ -84,7 +84,9 @@ fn monocycle(reviewer: &Reviewer, size: usize) -> Option<RingReference> {
         .comparisons
         .into_iter()
         .find(|c| used(c.measured.quantity.value_kj_per_mol))?;
-    (review.gas.basis == Basis::Measured).then_some(RingReference {
+    // A point that disagrees with all other rings would draw a maximum that nobody has seen confirmed.
+    let sound = measured.agreement == Agreement::Agrees;
+    (sound && review.gas.basis == Basis::Measured).then_some(RingReference {
         size,
         strain_kj_per_mol: strain.value_kj_per_mol,
         expanded_kj_per_mol: strain.expanded_kj_per_mol,

@@ -7,7 +7,7 @@ use super::report::heading;
 use super::rounding::{fixed, rounded, uncertainty};
 use super::strain::coverage_factor;
 use super::summary::basis_word;
-use crate::review::{Agreement, Comparison, Evidence, FormationEnthalpy};
+use crate::review::{Agreement, Comparison, Evidence, FormationEnthalpy, TELLING_KJ_PER_MOL};
 
 /// Measurements that the table of evidence lists: beyond the first dozen each moves the estimate by a few per cent of its own error.
 const EVIDENCE_SHOWN: usize = 12;
@@ -67,6 +67,11 @@ fn comparisons(comparisons: &[Comparison], citations: &mut Citations) -> Block {
                 blind.uncertainty.into(),
                 difference.interval().into(),
                 match comparison.agreement {
+                    Agreement::Agrees
+                        if comparison.expanded_difference_kj_per_mol > TELLING_KJ_PER_MOL =>
+                    {
+                        Inline::from("not told apart: U of the difference is wide")
+                    }
                     Agreement::Agrees => Inline::from("agree"),
                     Agreement::Disagrees => Inline::new().strong("disagree"),
                     Agreement::Settled => Inline::from("settled"),

@@ -8,7 +8,7 @@ use super::inline::{Inline, subscripted};
 use super::report::{heading, particulars_table};
 use super::rounding::{fixed, rounded};
 use super::{blocks_from_markdown, formation, strain};
-use crate::review::{SubstanceReview, UNSTATED_KJ_PER_MOL};
+use crate::review::{Quantity, RingStrain, SubstanceReview, UNSTATED_KJ_PER_MOL};
 
 /// Strain of a ring system from which on its bonds are marked in the drawing, kJ/mol: cyclohexane stays unmarked, cyclopentane does not.
 const MARKED_FROM_KJ_PER_MOL: f64 = 20.0;
@@ -98,20 +98,13 @@ fn stated(particulars: &Particulars) -> Vec<Block> {
 }
 
 fn figure(index: usize, review: &SubstanceReview) -> Block {
-    let strained: Vec<_> = review
-        .strain
-        .ring_systems
-        .iter()
-        .filter(|system| system.quantity.value_kj_per_mol > MARKED_FROM_KJ_PER_MOL)
-        .map(|system| StrainedSystem {
+    let strained: Vec<_> = in_use(review)
+        .filter(|(_, strain)| strain.value_kj_per_mol > MARKED_FROM_KJ_PER_MOL)
+        .map(|(system, strain)| StrainedSystem {
             atoms: system.atoms.clone(),
             label: format!(
                 "{} kJ/mol",
-                rounded(
-                    system.quantity.value_kj_per_mol,
-                    system.quantity.expanded_kj_per_mol
-                )
-                .value
+                rounded(strain.value_kj_per_mol, strain.expanded_kj_per_mol).interval()
             ),
         })
         .collect();
@@ -121,7 +114,7 @@ fn figure(index: usize, review: &SubstanceReview) -> Block {
             fixed(MARKED_FROM_KJ_PER_MOL, 0)
         ),
         _ => format!(
-            "Heavy hatched bonds: ring systems with a strain over {} kJ/mol, with their strain. Small numbers: atoms as in the tables.",
+            "Heavy hatched bonds: ring systems with a strain over {} kJ/mol, with their strain ± U (95 %). Small numbers: atoms as in the tables.",
             fixed(MARKED_FROM_KJ_PER_MOL, 0)
         ),
     };
@@ -189,4 +182,18 @@ fn identity(particulars: &Particulars, review: Option<&SubstanceReview>) -> Bloc
         ["Property", "Value"],
         rows,
     )
+}
+
+/// The ring systems with the strain in use: for a molecule of one ring system the total, which follows a measured enthalpy.
+pub(super) fn in_use(review: &SubstanceReview) -> impl Iterator<Item = (&RingStrain, Quantity)> {
+    let strain = &review.strain;
+    let alone = strain.ring_systems.len() == 1;
+    strain.ring_systems.iter().map(move |system| {
+        let quantity = if alone {
+            strain.quantity
+        } else {
+            system.quantity
+        };
+        (system, quantity)
+    })
 }

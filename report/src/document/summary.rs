@@ -8,6 +8,7 @@ use super::inline::{Inline, subscripted};
 use super::inputs::Inputs;
 use super::report::heading;
 use super::rounding::{Rounded, rounded};
+use super::substance::in_use;
 use crate::review::Basis;
 
 pub(super) fn blocks(inputs: &Inputs) -> Vec<Block> {
@@ -112,24 +113,23 @@ fn flags(inputs: &Inputs) -> Option<Block> {
     }))
 }
 
-/// The plot, when a substance has a ring system of one ring: only there is "the ring size" one number.
+/// The plot: the ring systems of the case among the measured cycloalkanes.
 fn plot(inputs: &Inputs) -> Option<Block> {
     let case: Vec<_> = inputs
         .reviews()
         .flat_map(|review| {
-            review
-                .strain
-                .ring_systems
-                .iter()
-                .filter_map(|system| match system.sizes[..] {
-                    [size] => Some(PlottedStrain {
-                        size,
-                        strain_kj_per_mol: system.quantity.value_kj_per_mol,
-                        expanded_kj_per_mol: system.quantity.expanded_kj_per_mol,
-                        label: review.name.clone(),
-                    }),
-                    _ => None,
+            in_use(review).filter_map(|(system, strain)| {
+                Some(PlottedStrain {
+                    size: *system.sizes.first()?,
+                    strain_kj_per_mol: strain.value_kj_per_mol,
+                    expanded_kj_per_mol: strain.expanded_kj_per_mol,
+                    label: if system.sizes.len() == 1 {
+                        review.name.clone()
+                    } else {
+                        format!("{} ({} rings)", review.name, system.sizes.len())
+                    },
                 })
+            })
         })
         .collect();
     if case.is_empty() {
@@ -159,7 +159,7 @@ fn plot(inputs: &Inputs) -> Option<Block> {
         .collect();
     Some(Block::Figure(Figure {
         id: "strain-by-ring-size".to_owned(),
-        caption: "Strain against ring size. Filled: ring systems of the case that are a single ring, sum of the ring levels. Open: measured unsubstituted cycloalkanes, measured minus strain-free sum. Bars are the expanded uncertainty U (95 %) of the true value. Fused, bridged and spiro systems have no single ring size and stand in the tables only.".into(),
+        caption: "Strain against ring size. Filled: ring systems of the case; a fused, bridged or spiro system stands at its smallest ring and holds the strain of all its rings. Open: measured unsubstituted cycloalkanes whose measured value agrees with the estimate made without it. Bars are the expanded uncertainty U (95 %) of the true value.".into(),
         alternative: format!("Strain against ring size. {}.", told.join("; ")),
         drawing: Drawing::StrainPlot(StrainPlot { background, case }),
     }))

@@ -22,9 +22,17 @@ pub struct LeftOut {
 }
 
 impl LeftOut {
-    /// Logarithm of the predictive density of the measured value.
+    /// Logarithm of the predictive density of the measured value, taken as Student's with the effective degrees of freedom of Welch and
+    /// Satterthwaite.
     fn score(&self) -> f64 {
-        let nu = self.new_measurement.degrees_of_freedom();
+        let Estimate {
+            model_variance,
+            tail_variance,
+            tail_degrees_of_freedom,
+            ..
+        } = self.new_measurement;
+        let nu =
+            tail_degrees_of_freedom * ((model_variance + tail_variance) / tail_variance).powi(2);
         let scale = self.new_measurement.u_kj_per_mol();
         let z = self.error_kj_per_mol / scale;
         libm::lgamma(f64::midpoint(nu, 1.0))

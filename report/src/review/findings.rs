@@ -48,6 +48,10 @@ pub enum Agreement {
     Settled,
 }
 
+/// Expanded uncertainty of a difference beyond which "it agrees" tells nothing, kJ/mol: of the size of a hydrogen bond or two, and of
+/// errors that the literature of strained molecules has seen.
+pub const TELLING_KJ_PER_MOL: f64 = 40.0;
+
 /// A measured value beside the estimate made without it.
 #[derive(Clone, Debug, Serialize)]
 pub struct Comparison {

@@ -34,7 +34,12 @@ pub struct Settled {
     pub reason: String,
 }
 
+/// Values closer than this are one measurement that two places quote, kJ/mol: half of the last digit that handbooks print, and a conversion.
+const SAME_KJ_PER_MOL: f64 = 0.15;
+
 /// Compares the measured values, those of the case file first, with the estimate made without them.
+///
+/// A published value that the case file quotes is not told twice.
 pub(super) fn compare(
     data: &Dataset,
     published: &[usize],
@@ -52,8 +57,12 @@ pub(super) fn compare(
         };
         comparison(measured, m.settled.as_ref(), without)
     });
-    let known = published.iter().map(|&index| {
-        let row = &data.rows[index];
+    let quoted = |value: f64| {
+        case.iter()
+            .any(|m| (m.value_kj_per_mol - value).abs() <= SAME_KJ_PER_MOL)
+    };
+    let rows = published.iter().map(|&index| &data.rows[index]);
+    let known = rows.filter(|row| !quoted(row.value_kj_per_mol)).map(|row| {
         let measured = MeasuredEnthalpy {
             quantity: measured(row.value_kj_per_mol, row.u_kj_per_mol),
             source: row.measurement.source.clone(),
@@ -103,8 +112,8 @@ fn measured(value_kj_per_mol: f64, u_kj_per_mol: f64) -> Quantity {
 /// The value that the review uses for a molecule with measured values; `None` without any.
 ///
 /// A value that somebody settled stands. Else, as long as every measured value agrees with the estimate made without them, the one of smallest uncertainty
-/// (the case file's before published ones when equal). Else the highest enthalpy of formation among the measured values and
-/// that estimate, which is the hazardous side.
+/// (the case file's before published ones when equal). Else the highest enthalpy of formation among the measured values, which is
+/// the hazardous side; the estimate made without them is among the candidates when none of them agrees with it.
 pub(super) fn choose(comparisons: &[Comparison], without: &Estimate) -> Option<(Quantity, Basis)> {
     let estimated = (quantity_of(without), Basis::Estimated);
     let measured = |c: &Comparison| (c.measured.quantity, Basis::Measured);
@@ -117,16 +126,17 @@ pub(super) fn choose(comparisons: &[Comparison], without: &Estimate) -> Option<(
     }
     let u = |c: &Comparison| c.measured.quantity.u_kj_per_mol;
     let surest = comparisons.iter().min_by(|a, b| u(a).total_cmp(&u(b)))?;
-    if comparisons.iter().all(|c| c.agreement == Agreement::Agrees) {
+    let agrees = |c: &Comparison| c.agreement == Agreement::Agrees;
+    if comparisons.iter().all(agrees) {
         return Some(measured(surest));
     }
     let value = |c: &Comparison| c.measured.quantity.value_kj_per_mol;
     let highest = comparisons
         .iter()
         .max_by(|a, b| value(a).total_cmp(&value(b)))?;
-    Some(if without.value_kj_per_mol > value(highest) {
-        estimated
+    if !comparisons.iter().any(agrees) && without.value_kj_per_mol > value(highest) {
+        Some(estimated)
     } else {
-        measured(highest)
-    })
+        Some(measured(highest))
+    }
 }

@@ -12,7 +12,7 @@ mod warnings;
 pub use check_values::{CheckValueError, check_values};
 pub use findings::{
     Agreement, Basis, CheckOutcome, CheckValue, Comparison, Evidence, FormationEnthalpy,
-    MeasuredEnthalpy, Quantity, RingStrain, Strain, SubstanceReview,
+    MeasuredEnthalpy, Quantity, RingStrain, Strain, SubstanceReview, TELLING_KJ_PER_MOL,
 };
 pub use measured::{CaseMeasurement, Settled, UNSTATED_KJ_PER_MOL};
 pub use reviewer::{ReviewError, Reviewer};

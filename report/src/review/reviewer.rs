@@ -153,6 +153,12 @@ impl Reviewer {
         let comparisons = compare(&self.data, published, case, &without);
         let chosen = choose(&comparisons, &without);
         let (quantity, basis) = chosen.unwrap_or((quantity_of(&estimate), Basis::Estimated));
+        // The strain belongs to the enthalpy in use: without the measurements where these were set aside.
+        let left_out = if chosen.is_some() && basis == Basis::Estimated {
+            own
+        } else {
+            left_out
+        };
 
         let strain = self.strain(molecule, &features, molar_mass, left_out, basis, quantity)?;
         let flags = warnings::of(
