@@ -64,7 +64,8 @@ fn lines(check: &CheckValue) -> String {
     };
     let number = |value: f64| rounded(value, check.tolerance).value;
     format!(
-        "{verdict:<7} {}: {}\n  published {:>9}   recomputed {:>9}   difference {:>7}   tolerance {:>6} {}\n  tolerance: {}\n  source: {}",
+        "{verdict:<7} {}: {}, {}\n  published {:>9}   recomputed {:>9}   difference {:>7}   tolerance {:>6} {}\n  tolerance: {}\n  source: {}",
+        check.id,
         check.quantity,
         check.subject,
         as_published(check.published),

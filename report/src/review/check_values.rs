@@ -142,7 +142,7 @@ fn cycloalkane(reviewer: &Reviewer, size: usize) -> Result<f64, String> {
     strain(reviewer, &format!("C1{}1", "C".repeat(size - 1)))
 }
 
-/// Size and strain of the most strained cycloalkane in a range of sizes such as `7..13`, both ends included.
+/// Size and strain of the most strained cycloalkane in a range of sizes such as `7..14`, both ends included.
 fn maximum(reviewer: &Reviewer, range: &str) -> Result<(usize, f64), String> {
     let ends = range
         .split_once("..")
