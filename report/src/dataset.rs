@@ -5,8 +5,9 @@ use std::fmt;
 
 use serde::Deserialize;
 use tautring_core::additivity::{Features, count};
+use tautring_core::molecule::MoleculeError;
 
-use crate::structure::{Structure, identity, skeleton};
+use crate::structure::{Structure, diastereomer, skeleton};
 
 /// Features of a molecule as large as the host reads.
 pub type HostFeatures = Features<4096>;
@@ -47,7 +48,7 @@ pub struct Row {
     pub molecule: usize,
     /// The molecule without stereo: what is left out together.
     pub constitution: usize,
-    /// Canonical text of the molecule, stereo included.
+    /// Canonical text of the molecule; mirror images are one.
     pub identity: String,
     /// Canonical text of the molecule without stereo and isotopes.
     pub skeleton: String,
@@ -118,9 +119,9 @@ impl Dataset {
             let features: HostFeatures =
                 count(&structure.molecule).map_err(|e| fail(&measurement.name, e.to_string()))?;
             let row = data.rows.len();
-            let identity = identity(&structure.molecule);
-            let skeleton = skeleton(&structure.molecule)
-                .map_err(|e| fail(&measurement.name, e.to_string()))?;
+            let spoilt = |e: MoleculeError| fail(&measurement.name, e.to_string());
+            let identity = diastereomer(&structure.molecule).map_err(spoilt)?;
+            let skeleton = skeleton(&structure.molecule).map_err(spoilt)?;
             let molecule = assign(&mut molecules, &identity, &mut data.molecules, row);
             let constitution = assign(&mut constitutions, &skeleton, &mut data.constitutions, row);
             data.rows.push(Row {

@@ -17,7 +17,7 @@ use super::findings::{
 use super::measured::{CaseMeasurement, choose, compare};
 use super::warnings;
 use crate::dataset::{Dataset, DatasetError, HostFeatures};
-use crate::structure::{HostMolecule, Structure, identity, skeleton};
+use crate::structure::{HostMolecule, Structure, diastereomer, skeleton};
 
 /// Name of the convention of strain, as reports and JSON give it.
 const CONVENTION: &str =
@@ -138,7 +138,8 @@ impl Reviewer {
         let plain = skeleton(molecule).map_err(AdditivityError::from)?;
         let none = Vec::new();
         let own = self.by_skeleton.get(&plain).unwrap_or(&none);
-        let same = self.by_identity.get(&identity(molecule)).unwrap_or(&none);
+        let same = diastereomer(molecule).map_err(AdditivityError::from)?;
+        let same = self.by_identity.get(&same).unwrap_or(&none);
 
         let left_out: &[usize] = if blind { own } else { &[] };
         let mut weights = self.workspace(own.len());

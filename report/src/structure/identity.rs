@@ -50,11 +50,52 @@ pub fn identity(molecule: &HostMolecule) -> String {
     text
 }
 
+/// The canonical text of what an enthalpy of formation belongs to: mirror images and isotopes are one, diastereomers are not.
+///
+/// A lone tetrahedral centre is no diastereomer, so its mark does not count.
+///
+/// # Errors
+/// None for a molecule that was read here; the core's errors where the graph without marks is none.
+///
+/// ```
+/// use tautring_report::structure::{Structure, diastereomer};
+/// let named = Structure::from_smiles("C[C@H](N)C(=O)O")?;
+/// let plain = Structure::from_smiles("CC(N)C(=O)O")?;
+/// assert_eq!(diastereomer(&named.molecule), diastereomer(&plain.molecule));
+/// # Ok::<(), tautring_report::structure::StructureError>(())
+/// ```
+pub fn diastereomer(molecule: &HostMolecule) -> Result<String, MoleculeError> {
+    let marked = |turned: bool| {
+        let mut builder = unmarked(molecule)?;
+        for (index, bond) in molecule.bonds().iter().enumerate() {
+            if let Some(stereo) = bond.stereo {
+                builder.set_double_bond_stereo(index, stereo)?;
+            }
+        }
+        let marks = molecule.tetrahedral();
+        for mark in marks.iter().filter(|_| marks.len() > 1) {
+            let mut mark = *mark;
+            mark.clockwise ^= turned;
+            builder.add_tetrahedral_stereo(mark)?;
+        }
+        builder.suppress_hydrogens();
+        Ok(identity(&builder.finish()?))
+    };
+    Ok(marked(false)?.min(marked(true)?))
+}
+
 /// The canonical text of a molecule without configurations and isotopes.
 ///
 /// # Errors
 /// None for a molecule that was read here; the core's errors where the graph without marks is none.
 pub fn skeleton(molecule: &HostMolecule) -> Result<String, MoleculeError> {
+    let mut builder = unmarked(molecule)?;
+    builder.suppress_hydrogens();
+    Ok(identity(&builder.finish()?))
+}
+
+/// The bare graph: atoms of natural composition and bonds.
+fn unmarked(molecule: &HostMolecule) -> Result<HostBuilder, MoleculeError> {
     let mut builder = HostBuilder::new();
     for atom in molecule.atoms() {
         let mut plain = *atom;
@@ -65,6 +106,5 @@ pub fn skeleton(molecule: &HostMolecule) -> Result<String, MoleculeError> {
         let [a, b] = bond.atoms.map(usize::from);
         builder.add_bond(a, b, bond.order)?;
     }
-    builder.suppress_hydrogens();
-    Ok(identity(&builder.finish()?))
+    Ok(builder)
 }

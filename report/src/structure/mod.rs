@@ -19,5 +19,5 @@ pub use capacity::{HostMolecule, MAX_ATOMS, MAX_BONDS};
 pub use coordinates::Coordinates;
 pub use error::StructureError;
 pub use flag::{StereoFlag, StereoKind};
-pub use identity::{identity, skeleton};
+pub use identity::{diastereomer, identity, skeleton};
 pub use structure::{Structure, read_structures};
