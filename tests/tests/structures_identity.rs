@@ -7,11 +7,7 @@ use tautring_report::structure::{HostMolecule, Structure, identity};
 
 fn flags(smiles: &str) -> Vec<String> {
     let structure = Structure::from_smiles(smiles).unwrap_or_else(|e| panic!("{smiles}: {e}"));
-    structure
-        .flags
-        .iter()
-        .map(|flag| flag.label.clone())
-        .collect()
+    structure.flag.map_or(Vec::new(), |flag| flag.labels)
 }
 
 /// The molecule with its atoms in a pseudo-random order.
@@ -145,7 +141,10 @@ fn open_configurations_are_flagged_where_they_matter() {
         ("C/C=C/C", &[]),
         ("CC(C)=CC", &[]),
         ("C1CCCC=C1", &[]),
-        ("C1CCCCCC=C1", &["C7=C8"]),
+        // Up to eight ring atoms a double bond without a mark is cis.
+        ("C1CCCCCC=C1", &[]),
+        ("C1=CC=CC=CC=C1", &[]),
+        ("C1CCCCCCC=C1", &["C8=C9"]),
         ("CC=NO", &["C2=N3"]),
         ("CC=N", &[]),
         ("CC=C=CC", &[]),
@@ -164,6 +163,16 @@ fn open_configurations_are_flagged_where_they_matter() {
         ("C12C3C4C1C5C2C3C45", &[]),
         ("C1CC2CC12", &[]),
         ("CC(O)C(C)O", &["C2", "C4"]),
+        ("CC(O)C(C)C=CC", &["C2", "C4", "C6=C7"]),
+        // The two like CH2 of a spiro atom close a ring without another centre; the lone centre has enantiomers only.
+        ("OC(=O)C1CC12CC2", &[]),
+        ("CCOC(=O)C1CC12CC2", &[]),
+        ("CC1CC12CC2C", &["C2", "C4", "C6"]),
+        // The ring of the like ligands holds the other centre: cis or trans to the spiro atom's branches, which differ.
+        ("CC1CCC2(CC1)CC2C", &["C2", "C5", "C9"]),
+        ("CC1CCC2(CC1)CC2", &[]),
+        // The first spiro atom would be the only partner of the second, and is itself no centre.
+        ("C1CC12CCC3(CC2)CCOC3", &[]),
     ] {
         assert_eq!(flags(smiles), expected, "{smiles}");
     }
@@ -187,6 +196,40 @@ fn idle_marks_are_dropped_and_telling_ones_kept() {
         key("OC[C@H](O)[C@H](O)[C@@H](O)CO")
     );
     assert_eq!(key("C1[C@H]2C[C@@H]12"), key("C1C2CC12"));
+}
+
+#[test]
+fn rings_of_up_to_eight_settle_cis_double_bonds() {
+    let key = |smiles: &str| identity(&Structure::from_smiles(smiles).unwrap().molecule);
+    assert_eq!(key("C1=CC=CC=CC=C1"), key(r"C1=C\C=C/C=C\C=C/1"));
+    assert_eq!(key("C1CCCCCC=C1"), key(r"C1CCC/C=C\CC1"));
+    assert_ne!(key("C1CCCCCC=C1"), key("C1CCC/C=C/CC1"));
+    // The mark may be told by a substituent outside the ring: that of the first is trans to the ring, of the second cis.
+    assert_eq!(key("CC1=CCCCCCC1"), key(r"C/C1=C/CCCCCC1"));
+    assert_ne!(key("CC1=CCCCCCC1"), key(r"C/C1=C\CCCCCC1"));
+    assert_ne!(key("C1CCCCCCC=C1"), key(r"C1CCCC/C=C\CC1"));
+}
+
+#[test]
+fn the_open_configurations_of_a_molecule_make_one_line() {
+    let line = |smiles: &str| {
+        let flag = Structure::from_smiles(smiles).unwrap().flag;
+        flag.map(|flag| flag.to_string())
+    };
+    assert_eq!(
+        line("CC(O)C(C)C=CC").as_deref(),
+        Some(
+            "configuration of C2, C4 and C6=C7 not stated; diastereomers differ by a few kJ/mol, more where rings are fused; \
+             cis and trans differ by a few kJ/mol, far more in a ring"
+        )
+    );
+    assert_eq!(
+        line("CC=CC").as_deref(),
+        Some(
+            "configuration of C2=C3 not stated; cis and trans differ by a few kJ/mol, far more in a ring"
+        )
+    );
+    assert_eq!(line("CCO"), None);
 }
 
 #[test]

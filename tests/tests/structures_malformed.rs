@@ -45,9 +45,22 @@ fn the_offending_part_is_underlined() {
         ("C$C", "$"),
         ("C(C)(C)(C)(C)C", "C"),
         ("C[999C]", "[999C]"),
+        ("C%", "%"),
+        ("C%1CC%1", "%1"),
+        ("C%(CC", "%"),
     ] {
         assert_eq!(underlined(text), part, "{text}: {}", smiles_error(text));
     }
+}
+
+#[test]
+fn a_percent_sign_without_its_number_is_named() {
+    for text in ["C%", "C%C", "C%1CC%1", "C%()CC%()", "C%(1"] {
+        let message = smiles_error(text).to_string();
+        let expected = "a two-digit number is missing after %";
+        assert!(message.starts_with(expected), "{text}: {message}");
+    }
+    assert!(Structure::from_smiles("C%10CC%10").is_ok());
 }
 
 #[test]

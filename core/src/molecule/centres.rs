@@ -16,7 +16,7 @@ const ALWAYS_CIS: usize = 8;
 pub enum CentreKind {
     /// Four different ligands.
     Different,
-    /// Two ligands alike that close a ring: cis or trans to another centre of the ring.
+    /// Two ligands alike that close a ring: cis or trans to another centre of that ring.
     AcrossRing,
     /// A bridgehead or a fusion of small rings whose four ligands differ; the rings leave its configuration no choice.
     Fixed,
@@ -26,20 +26,39 @@ impl<const A: usize, const B: usize> Molecule<A, B> {
     /// The atoms that can be tetrahedral centres, by index.
     pub fn possible_centres(&self) -> Vec<(u16, CentreKind), A> {
         let classes = self.symmetry_classes();
-        let centres: Vec<(u16, CentreKind), A> = (0..self.atoms().len())
+        let mut centres: Vec<(u16, CentreKind), A> = (0..self.atoms().len())
             .filter_map(|atom| Some((atom as u16, self.centre_kind(&classes, atom)?)))
             .collect();
-        // Cis or trans to what? Without a partner in the ring the atom is no centre.
-        let partner = |atom: u16| {
-            let mut rings = self.rings().iter().filter(|ring| ring.contains(&atom));
-            rings.any(|ring| {
-                let other = |(a, _): &(u16, CentreKind)| *a != atom && ring.contains(a);
-                centres.iter().any(other)
-            })
-        };
-        let is_centre =
-            |(atom, kind): &&(u16, CentreKind)| *kind != CentreKind::AcrossRing || partner(*atom);
-        centres.iter().filter(is_centre).copied().collect()
+        // An atom that is struck out may have been the only partner of another.
+        loop {
+            let kept: Vec<(u16, CentreKind), A> = centres
+                .iter()
+                .filter(|&&(atom, kind)| {
+                    kind != CentreKind::AcrossRing || self.has_partner(&classes, &centres, atom)
+                })
+                .copied()
+                .collect();
+            if kept.len() == centres.len() {
+                return kept;
+            }
+            centres = kept;
+        }
+    }
+
+    /// Whether a ring that two like ligands of an atom close holds another centre: cis or trans to what, otherwise?
+    ///
+    /// The ring must be that of the like ligands: the spiro atom of a spiro\[2.2\]pentane with one substituent is no centre.
+    fn has_partner(&self, classes: &[u16], centres: &[(u16, CentreKind)], atom: u16) -> bool {
+        let class = |ligand: u16| classes.get(usize::from(ligand));
+        self.rings().iter().any(|ring| {
+            let around = self.neighbours(usize::from(atom)).iter().map(|n| n.atom);
+            let mut branches = around.filter(|branch| ring.contains(branch));
+            // A ring has no chord, so that an atom of it has two neighbours in it.
+            let (one, two) = (branches.next(), branches.next());
+            let alike = one.is_some() && one.and_then(class) == two.and_then(class);
+            let other = |&(a, _): &(u16, CentreKind)| a != atom && ring.contains(&a);
+            alike && ring.contains(&atom) && centres.iter().any(other)
+        })
     }
 
     fn centre_kind(&self, classes: &[u16], atom: usize) -> Option<CentreKind> {

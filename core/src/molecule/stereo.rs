@@ -7,21 +7,47 @@ use super::centres::CentreKind;
 use super::graph::{Ligand, Neighbour, TetrahedralStereo};
 use super::molecule::Molecule;
 
+/// Size of the smallest ring in which a trans double bond can be kept: trans-cyclooctene.
+const SMALLEST_TRANS: usize = 8;
+
 impl<const A: usize, const B: usize> Molecule<A, B> {
-    /// Drops every stereo mark whose inversion gives the same molecule, and marks on double bonds of rings below eight.
+    /// Drops every stereo mark whose inversion gives the same molecule, and marks on double bonds that their ring settles.
     ///
     /// The test is the definition, not a rule of thumb: a mark is inverted alone and the two molecules are compared. So the cis and trans
     /// marks of 1,4-dimethylcyclohexane stay, and those of a CH2 group or of 2-methylbut-2-ene go.
     pub(super) fn drop_idle_stereo(&mut self) {
         for bond in 0..self.bonds().len() {
-            let small = self.bond_ring_sizes(bond).smallest().is_some_and(|n| n < 8);
-            if small || self.is_aromatic_bond(bond) {
+            if self.is_aromatic_bond(bond) || self.is_settled_by_ring(bond) {
                 self.set_bond_stereo(bond, None);
             }
         }
         self.drop_settled_centres();
         // Marks that fall away together may leave others idle.
         while self.drop_idle_once() {}
+    }
+
+    /// Whether a double bond is cis because of its ring: below eight atoms always, in a ring of eight unless it is marked as trans.
+    ///
+    /// trans-Cyclooctene was made, smaller trans-cycloalkenes cannot be kept; nobody marks the cis one.
+    fn is_settled_by_ring(&self, bond: usize) -> bool {
+        let Some(smallest) = self.bond_ring_sizes(bond).smallest() else {
+            return false;
+        };
+        smallest < SMALLEST_TRANS || (smallest == SMALLEST_TRANS && !self.is_trans_in_ring(bond))
+    }
+
+    /// Whether the mark of a double bond makes it trans in a ring of eight.
+    fn is_trans_in_ring(&self, bond: usize) -> bool {
+        let Some((bond, stereo)) = self.bonds().get(bond).and_then(|b| Some((b, b.stereo?))) else {
+            return false;
+        };
+        let [a, b] = bond.atoms;
+        self.rings().iter().any(|ring| {
+            let outside = |atom: u16| !ring.contains(&atom);
+            let crossed = outside(stereo.first_reference) != outside(stereo.second_reference);
+            let holds = ring.len() == SMALLEST_TRANS && ring.contains(&a) && ring.contains(&b);
+            holds && stereo.same_side == crossed
+        })
     }
 
     /// Drops the marks that are idle now; whether there were any.

@@ -58,7 +58,7 @@ pub(super) fn of(
                 .to_owned(),
         );
     }
-    warnings.extend(structure.flags.iter().map(ToString::to_string));
+    warnings.extend(structure.flag.iter().map(ToString::to_string));
     if other_configuration_measured {
         warnings.push(
             "a measured value is known for a stated configuration of this molecule; state the configuration to use it"

@@ -10,76 +10,73 @@ use tautring_core::molecule::{BondOrder, CentreKind, Element};
 
 use super::capacity::HostMolecule;
 
-/// What kind of configuration is open.
-#[derive(Clone, Copy, Debug, PartialEq, Eq)]
-pub enum StereoKind {
-    /// A tetrahedral centre in a molecule with others.
-    Tetrahedral,
-    /// A double bond that can be cis or trans.
-    DoubleBond,
-}
+/// Size of the smallest ring in which a double bond without a mark may be either; up to eight it is cis, trans has to be marked.
+const SMALLEST_OPEN_RING: usize = 9;
 
-/// A configuration that the input does not state.
+/// The configurations that the input of a molecule does not state; at least one.
 #[derive(Clone, Debug, PartialEq, Eq)]
 pub struct StereoFlag {
-    /// What kind.
-    pub kind: StereoKind,
-    /// Indices of the centre, or of the two atoms of the double bond.
-    pub atoms: Vec<usize>,
-    /// The atoms with their numbers from 1, such as `C3=C4`.
-    pub label: String,
+    /// Indices of the tetrahedral centres, of which the molecule has others.
+    pub centres: Vec<usize>,
+    /// Indices of the atoms of double bonds that can be cis or trans.
+    pub double_bonds: Vec<[usize; 2]>,
+    /// The centres, then the double bonds, by the atoms' numbers from 1, such as `C3` and `C5=C6`.
+    pub labels: Vec<String>,
 }
 
 impl fmt::Display for StereoFlag {
     fn fmt(&self, f: &mut fmt::Formatter<'_>) -> fmt::Result {
-        match self.kind {
-            StereoKind::Tetrahedral => write!(
-                f,
-                "configuration of {} not stated; diastereomers differ by a few kJ/mol, more where rings are fused",
-                self.label
-            ),
-            StereoKind::DoubleBond => write!(
-                f,
-                "configuration of {} not stated; cis and trans differ by a few kJ/mol, far more in a ring",
-                self.label
-            ),
+        f.write_str("configuration of ")?;
+        for (index, label) in self.labels.iter().enumerate() {
+            f.write_str(match index {
+                0 => "",
+                _ if index + 1 == self.labels.len() => " and ",
+                _ => ", ",
+            })?;
+            f.write_str(label)?;
         }
+        f.write_str(" not stated")?;
+        if !self.centres.is_empty() {
+            f.write_str("; diastereomers differ by a few kJ/mol, more where rings are fused")?;
+        }
+        if !self.double_bonds.is_empty() {
+            f.write_str("; cis and trans differ by a few kJ/mol, far more in a ring")?;
+        }
+        Ok(())
     }
 }
 
-/// The configurations that are open and matter.
-pub(super) fn open_configurations(molecule: &HostMolecule) -> Vec<StereoFlag> {
+/// The configurations that are open and matter, if there are any.
+pub(super) fn open_configurations(molecule: &HostMolecule) -> Option<StereoFlag> {
+    let stated = |atom: u16| molecule.tetrahedral().iter().any(|m| m.centre == atom);
+    let possible = molecule.possible_centres();
+    let centres: Vec<usize> = possible
+        .iter()
+        .filter(|&&(atom, kind)| possible.len() > 1 && kind != CentreKind::Fixed && !stated(atom))
+        .map(|&(atom, _)| usize::from(atom))
+        .collect();
     let classes = molecule.symmetry_classes();
-    let centres = molecule.possible_centres();
-    let stated = |atom: usize| {
-        let mut marks = molecule.tetrahedral().iter();
-        marks.any(|mark| usize::from(mark.centre) == atom)
-    };
+    let double_bonds: Vec<[usize; 2]> = molecule
+        .bonds()
+        .iter()
+        .enumerate()
+        .filter(|&(index, bond)| {
+            bond.stereo.is_none() && can_be_cis_or_trans(molecule, &classes, index)
+        })
+        .map(|(_, bond)| bond.atoms.map(usize::from))
+        .collect();
     let name = |atom: usize| format!("{}{}", molecule.atoms()[atom].element.symbol(), atom + 1);
-    let mut flags = Vec::new();
-    if centres.len() > 1 {
-        for (atom, kind) in centres {
-            let atom = usize::from(atom);
-            if kind != CentreKind::Fixed && !stated(atom) {
-                flags.push(StereoFlag {
-                    kind: StereoKind::Tetrahedral,
-                    atoms: vec![atom],
-                    label: name(atom),
-                });
-            }
-        }
-    }
-    for (index, bond) in molecule.bonds().iter().enumerate() {
-        if bond.stereo.is_none() && can_be_cis_or_trans(molecule, &classes, index) {
-            let [a, b] = bond.atoms.map(usize::from);
-            flags.push(StereoFlag {
-                kind: StereoKind::DoubleBond,
-                atoms: vec![a, b],
-                label: format!("{}={}", name(a), name(b)),
-            });
-        }
-    }
-    flags
+    let bond_name = |[a, b]: &[usize; 2]| format!("{}={}", name(*a), name(*b));
+    let labels: Vec<String> = centres
+        .iter()
+        .map(|&atom| name(atom))
+        .chain(double_bonds.iter().map(bond_name))
+        .collect();
+    (!labels.is_empty()).then_some(StereoFlag {
+        centres,
+        double_bonds,
+        labels,
+    })
 }
 
 fn can_be_cis_or_trans(molecule: &HostMolecule, classes: &[u16], index: usize) -> bool {
@@ -87,7 +84,7 @@ fn can_be_cis_or_trans(molecule: &HostMolecule, classes: &[u16], index: usize) -
     let small_ring = molecule
         .bond_ring_sizes(index)
         .smallest()
-        .is_some_and(|n| n < 8);
+        .is_some_and(|n| n < SMALLEST_OPEN_RING);
     if bond.order != BondOrder::Double || small_ring || molecule.is_aromatic_bond(index) {
         return false;
     }

@@ -18,6 +18,6 @@ mod structure;
 pub use capacity::{HostMolecule, MAX_ATOMS, MAX_BONDS};
 pub use coordinates::Coordinates;
 pub use error::StructureError;
-pub use flag::{StereoFlag, StereoKind};
+pub use flag::StereoFlag;
 pub use identity::{diastereomer, identity, skeleton};
 pub use structure::{Structure, read_structures};

@@ -68,8 +68,9 @@ impl Outline {
                 }
                 b')' => current = branches.pop().unwrap_or(current),
                 b'0'..=b'9' | b'%' => {
+                    let label = label(smiles, &span)?;
                     if let Some(atom) = current {
-                        outline.ring_end(atom, label(&smiles[span.clone()]), bond.take(), span)?;
+                        outline.ring_end(atom, label, bond.take(), span)?;
                     }
                 }
                 b'-' | b'=' | b'#' | b':' | b'/' | b'\\' => bond = Some(byte),
@@ -195,11 +196,23 @@ fn alien_character(c: char) -> String {
 }
 
 /// The number of a ring-closure token `3`, `%12`, `%(123)`.
-fn label(token: &str) -> u32 {
-    token
-        .trim_matches(['%', '(', ')'])
-        .parse()
-        .unwrap_or(u32::MAX)
+fn label(smiles: &str, span: &Range<usize>) -> Result<u32, StructureError> {
+    let token = &smiles[span.clone()];
+    let digits = match token.strip_prefix('%') {
+        None => Some(token),
+        Some(number) if number.starts_with('(') => number
+            .strip_prefix('(')
+            .and_then(|number| number.strip_suffix(')')),
+        Some(number) => Some(number).filter(|number| number.len() == 2),
+    };
+    digits
+        .filter(|digits| digits.bytes().all(|byte| byte.is_ascii_digit()))
+        .and_then(|digits| digits.parse().ok())
+        .ok_or_else(|| StructureError::Syntax {
+            message: "a two-digit number is missing after %: write the ring bond as %10 to %99"
+                .into(),
+            span: span.clone(),
+        })
 }
 
 fn placeholder(smiles: &str, span: Range<usize>) -> StructureError {

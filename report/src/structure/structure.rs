@@ -18,7 +18,7 @@ pub struct Structure {
     /// Where a Molfile puts the atoms.
     pub coordinates: Option<Coordinates>,
     /// Configurations that the input leaves open and that an enthalpy depends on.
-    pub flags: Vec<StereoFlag>,
+    pub flag: Option<StereoFlag>,
     /// The name that a Molfile gives, empty without one.
     pub name: String,
     /// The text it was read from.
@@ -50,7 +50,7 @@ impl Structure {
             smiles::located(error, &outline).shifted(offset)
         })?;
         Ok(Self {
-            flags: open_configurations(&molecule),
+            flag: open_configurations(&molecule),
             molecule,
             coordinates: None,
             name: String::new(),
@@ -87,7 +87,7 @@ impl Structure {
             span: None,
         })?;
         Ok(Self {
-            flags: open_configurations(&molecule),
+            flag: open_configurations(&molecule),
             molecule,
             coordinates: record.coordinates,
             name: record.name,
