@@ -45,20 +45,24 @@ impl<const A: usize, const B: usize> Molecule<A, B> {
         }
     }
 
-    /// Whether a ring that two like ligands of an atom close holds another centre: cis or trans to what, otherwise?
+    /// Whether a ring through one of an atom's two like ligands holds another centre: cis or trans to what, otherwise?
     ///
-    /// The ring must be that of the like ligands: the spiro atom of a spiro\[2.2\]pentane with one substituent is no centre.
+    /// The other ring of a spiro atom does not count: that of a spiro\[2.2\]pentane with one substituent is no centre. Like ligands may
+    /// also lie in two fused rings, as in decalin, whose junction atoms are each other's partners.
     fn has_partner(&self, classes: &[u16], centres: &[(u16, CentreKind)], atom: u16) -> bool {
+        let around = self.neighbours(usize::from(atom));
         let class = |ligand: u16| classes.get(usize::from(ligand));
-        self.rings().iter().any(|ring| {
-            let around = self.neighbours(usize::from(atom)).iter().map(|n| n.atom);
-            let mut branches = around.filter(|branch| ring.contains(branch));
-            // A ring has no chord, so that an atom of it has two neighbours in it.
-            let (one, two) = (branches.next(), branches.next());
-            let alike = one.is_some() && one.and_then(class) == two.and_then(class);
-            let other = |&(a, _): &(u16, CentreKind)| a != atom && ring.contains(&a);
-            alike && ring.contains(&atom) && centres.iter().any(other)
-        })
+        let has_like = |ligand: u16| {
+            let mut others = around.iter().filter(|n| n.atom != ligand);
+            others.any(|n| class(n.atom) == class(ligand))
+        };
+        let through_like = |ring: &[u16]| {
+            let mut branches = around.iter().filter(|n| ring.contains(&n.atom));
+            ring.contains(&atom) && branches.any(|n| has_like(n.atom))
+        };
+        let other = |ring: &[u16]| centres.iter().any(|&(a, _)| a != atom && ring.contains(&a));
+        let mut rings = self.rings().iter();
+        rings.any(|ring| through_like(ring) && other(ring))
     }
 
     fn centre_kind(&self, classes: &[u16], atom: usize) -> Option<CentreKind> {
