@@ -114,24 +114,32 @@ fn flags(inputs: &Inputs) -> Option<Block> {
 }
 
 /// The plot: the ring systems of the case among the measured cycloalkanes.
+///
+/// Points carry numbers, which stay apart where names would lie on each other; the caption says what they stand for.
 fn plot(inputs: &Inputs) -> Option<Block> {
-    let case: Vec<_> = inputs
-        .reviews()
-        .flat_map(|review| {
-            in_use(review).filter_map(|(system, strain)| {
-                Some(PlottedStrain {
-                    size: *system.sizes.first()?,
-                    strain_kj_per_mol: strain.value_kj_per_mol,
-                    expanded_kj_per_mol: strain.expanded_kj_per_mol,
-                    label: if system.sizes.len() == 1 {
-                        review.name.clone()
-                    } else {
-                        format!("{} ({} rings)", review.name, system.sizes.len())
-                    },
-                })
-            })
-        })
-        .collect();
+    let mut case = Vec::new();
+    let mut told = Vec::new();
+    for review in inputs.reviews() {
+        for (system, strain) in in_use(review) {
+            let size = *system.sizes.first()?;
+            let number = case.len() + 1;
+            let interval = rounded(strain.value_kj_per_mol, strain.expanded_kj_per_mol).interval();
+            let rings = match system.sizes.len() {
+                1 => String::new(),
+                n => format!(", {n} rings"),
+            };
+            told.push(format!(
+                "{number} {}{rings}: {interval} kJ/mol",
+                review.name
+            ));
+            case.push(PlottedStrain {
+                size,
+                strain_kj_per_mol: strain.value_kj_per_mol,
+                expanded_kj_per_mol: strain.expanded_kj_per_mol,
+                label: number.to_string(),
+            });
+        }
+    }
     if case.is_empty() {
         return None;
     }
@@ -145,22 +153,11 @@ fn plot(inputs: &Inputs) -> Option<Block> {
             label: String::new(),
         })
         .collect();
-    let told: Vec<_> = case
-        .iter()
-        .map(|point: &PlottedStrain| {
-            let strain = rounded(point.strain_kj_per_mol, point.expanded_kj_per_mol);
-            format!(
-                "{}, ring of {}, {} kJ/mol",
-                point.label,
-                point.size,
-                strain.interval()
-            )
-        })
-        .collect();
+    let told = told.join("; ");
     Some(Block::Figure(Figure {
         id: "strain-by-ring-size".to_owned(),
-        caption: "Strain against ring size. Filled: ring systems of the case; a fused, bridged or spiro system stands at its smallest ring and holds the strain of all its rings. Open: measured unsubstituted cycloalkanes whose measured value agrees with the estimate made without it. Bars are the expanded uncertainty U (95 %) of the true value.".into(),
-        alternative: format!("Strain against ring size. {}.", told.join("; ")),
+        caption: format!("Strain against ring size. Filled: ring systems of the case; a fused, bridged or spiro system stands at its smallest ring and holds the strain of all its rings. Open: measured unsubstituted cycloalkanes whose measured value agrees with the estimate made without it. Bars are the expanded uncertainty U (95 %) of the true value. Numbers: {told}.").into(),
+        alternative: format!("Strain against ring size. {told}."),
         drawing: Drawing::StrainPlot(StrainPlot { background, case }),
     }))
 }
