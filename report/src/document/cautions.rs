@@ -27,6 +27,7 @@ pub(super) fn blocks() -> Vec<Block> {
                 ("Catalysis and autocatalysis. ", "Acids, bases, metals, rust and the products themselves may open a ring far below its thermal limit."),
                 ("Confinement. ", "Pressure, gas release and heat loss depend on the vessel, not on the molecule."),
                 ("Functional groups. ", "Diazo, azide, nitro, peroxide and other groups known to decompose are not looked for; a molecule without strain can be an explosive."),
+                ("Configuration. ", "An estimate hardly tells cis from trans isomers; only a measured value belongs to the configuration that is stated."),
                 ("Impurities, solvents and mixtures. ", "Every number is for one pure molecule in the gas phase."),
             ]
             .map(|(what, why)| Inline::new().strong(what).text(why))
