@@ -1,4 +1,4 @@
-"""Writes measurements.csv, the measured enthalpies of formation at 298.15 K, from the published tables.
+"""Writes measurements.csv, the measured enthalpies of formation, vaporisation and sublimation at 298.15 K.
 
 Run `python data/make_measurements.py` with the packages of requirements.txt. The output depends on the committed
 tables beside this file and on the two packages alone, so it comes out the same to the byte.
@@ -9,13 +9,33 @@ import csv
 import math
 import os
 import sys
+import typing
 
 import chemicals
+from chemicals.phase_change import Tb
 
 import structures as st
 
 CRC = "Heat Capacity/CRC Standard Thermodynamic Properties of Chemical Substances.tsv"
 ATCT = {"g": "Reactions/ATcT 1.112 (g).tsv", "l": "Reactions/ATcT 1.112 (l).tsv"}
+
+
+
+class PhaseChange(typing.NamedTuple):
+    """A table of enthalpies of vaporisation (phase v) or sublimation (phase b) at 298.15 K in the package, in J/mol."""
+
+    path: str
+    phase: str
+    column: str
+    source: str
+    kind: str
+
+
+PHASE_CHANGES = (
+    PhaseChange("Phase Change/CRC Handbook Heat of Vaporization.tsv", "v", "Hvap298", "crc2014", "handbook_vaporisation"),
+    PhaseChange("Phase Change/Ghazerati Appendix Vaporization Enthalpy.tsv", "v", "Hvap298", "gharagheizi-2013-vaporisation", "compilation_vaporisation"),
+    PhaseChange("Phase Change/Ghazerati Appendix Sublimation Enthalpy.tsv", "b", "Hsub", "gharagheizi-2013-sublimation", "compilation_sublimation"),
+)
 PACKAGE = f"PyPI package chemicals {chemicals.__version__}"
 COLUMNS = (
     "name smiles phase value_kj_per_mol uncertainty_kj_per_mol coverage_k u_kj_per_mol u_basis "
@@ -28,6 +48,14 @@ SAME_VALUE_KJ = 0.15
 # A value printed to 0.1 kcal/mol is known to 0.21 kJ/mol, and its partner to 0.05 kJ/mol.
 SAME_VALUE_KCAL = 0.26
 COVERAGE_STATED = 2
+# What is printed for these says how well one laboratory repeats itself: its factor, while the default adds what
+# laboratories differ by. The reason for both stands in default_uncertainties.csv.
+COVERAGE_OF_REPEATABILITY = {"compilation_sublimation": 1}
+# A vaporisation enthalpy of a longer chain at 298.15 K is extrapolated from shorter ones, not measured.
+HEAVY_ATOMS_MOST = 40
+# Below this boiling point the vapour over the liquid at 298.15 K is at more than 2.5 bar, and its enthalpy falls short
+# of the ideal gas's by more than the default uncertainty; see data/README.md.
+BOILS_ABOVE_K = 273.15
 KCAL_NOTE = "printed in kcal/mol"
 
 SOURCE_KEYS = {row["published_source"]: row["source"] for row in st.read_csv("source_keys.csv")}
@@ -47,20 +75,26 @@ def kj(joules):
     return text + "0" if text.endswith(".") else text
 
 
+def default_u(kind, mol):
+    carbons = st.counts_of(mol).get("C", 0)
+    default = DEFAULTS[kind]
+    return math.hypot(float(default["u_kj_per_mol"]), carbons * float(default["u_per_carbon_kj_per_mol"]))
+
+
 def row(name, smiles, phase, value, stated_u, source, where, cas, kind, note):
     mol = st.parse(smiles)
+    coverage = COVERAGE_OF_REPEATABILITY.get(kind, COVERAGE_STATED)
     filled = {
         "name": name, "smiles": st.molecule_key(smiles), "phase": phase, "value_kj_per_mol": value,
-        "uncertainty_kj_per_mol": stated_u, "coverage_k": str(COVERAGE_STATED) if stated_u else "",
+        "uncertainty_kj_per_mol": stated_u, "coverage_k": str(coverage) if stated_u else "",
         "source": source, "where_seen": where, "cas": cas, "kind": kind, "use": "fit", "note": note,
     }
-    if stated_u:
-        u, basis = float(stated_u) / COVERAGE_STATED, "stated"
+    if not stated_u:
+        u, basis = default_u(kind, mol), f"default:{kind}"
+    elif kind in COVERAGE_OF_REPEATABILITY:
+        u, basis = math.hypot(float(stated_u) / coverage, default_u(kind, mol)), f"stated and default:{kind}"
     else:
-        carbons = st.counts_of(mol).get("C", 0)
-        default = DEFAULTS[kind]
-        u = math.hypot(float(default["u_kj_per_mol"]), carbons * float(default["u_per_carbon_kj_per_mol"]))
-        basis = f"default:{kind}"
+        u, basis = float(stated_u) / coverage, "stated"
     filled["u_kj_per_mol"] = f"{u:.4g}"
     filled["u_basis"] = basis
     excluded = st.exclusion_for(cas, name, phase)
@@ -79,7 +113,11 @@ def structure_of(cas, name):
     """(SMILES, None) of a molecule that belongs in the table, or (None, why not)."""
     if cas in REFERENCE:
         return REFERENCE[cas], None
-    smiles = st.identify(cas, name)
+    return belongs(st.identify(cas, name), cas, name)
+
+
+def belongs(smiles, cas, name):
+    """The SMILES, None when it is that of a molecule that belongs in the table; else None, why not."""
     mol = st.parse(smiles)
     if mol is None:
         return None, "no structure known"
@@ -122,6 +160,35 @@ def atct_rows(skipped):
                        entry["CAS"], "evaluated", f"table formula {formula}")
             if not stated:  # the elements in their reference state are zero by definition
                 made.update(uncertainty_kj_per_mol="0.0", coverage_k=str(COVERAGE_STATED), u_kj_per_mol="0", u_basis="stated")
+            yield made
+
+
+def tidy(name):
+    """A name without the blanks that the tables leave at its end and inside."""
+    return " ".join(name.split())
+
+
+def phase_change_rows(skipped):
+    for table in PHASE_CHANGES:
+        for entry in package_table(table.path):
+            if not entry[table.column]:
+                continue
+            cas, name = entry["CAS"], tidy(entry["Chemical"])
+            smiles, finding = st.identify_by_both(cas, name)
+            smiles, why_not = belongs(smiles, cas, name)
+            if smiles and st.parse(smiles).GetNumHeavyAtoms() > HEAVY_ATOMS_MOST:
+                why_not = f"more than {HEAVY_ATOMS_MOST} atoms besides hydrogen: extrapolated, not measured"
+            if why_not:
+                skipped[f"{table.source} ({table.phase}): {why_not}"] += 1
+                continue
+            stated = kj(entry["error"]) if entry.get("error") else ""
+            made = row(name, smiles, table.phase, kj(entry[table.column]), stated, table.source,
+                       f"{PACKAGE}: {table.path}", cas, table.kind, finding)
+            boils = Tb(cas, method="CRC_ORG") if table.phase == "v" else None
+            if finding and made["use"] == "fit":
+                made["use"] = "structure unsettled"
+            elif boils and boils < BOILS_ABOVE_K and made["use"] == "fit":
+                made["use"] = "vapour not ideal"
             yield made
 
 
@@ -173,7 +240,7 @@ def mark_duplicates(rows):
 def measurements():
     skipped = collections.Counter()
     rows = list(crc_rows(skipped)) + list(atct_rows(skipped))
-    rows += list(strained_rows(rows, skipped))
+    rows += list(strained_rows(rows, skipped)) + list(phase_change_rows(skipped))
     mark_duplicates(rows)
     rows.sort(key=lambda r: tuple(r[c] for c in ("smiles", "phase", "source", "name", "cas", "value_kj_per_mol")))
     return rows, skipped

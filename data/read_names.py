@@ -13,14 +13,16 @@ from py2opsin import py2opsin
 import make_measurements as tables
 import structures as st
 
-RACEMATE = re.compile(r",?\s*\((±|\+|-)\)-?$")
+RACEMATE = re.compile(r",?\s*\((±|\+|-)\)-?$|^\((dl|[dl]|±|\+|-)\)[ -]")
+GEOMETRY_APART = re.compile(r"^(\([EZRS\d,]+\)|cis|trans|exo|endo|meso) ")
+BESIDE_IN_BRACKETS = re.compile(r" \([^()]*[a-z]{4}[^()]*\)$")
 GEOMETRY_INSIDE = re.compile(r"^(\S+?)-(cis|trans)-(\S+)$")
 TRIVIAL_IN_BRACKETS = re.compile(r"^(bicyclo\[[\d.]+\]\S+) \(\w+\)$|^\w+ \((tricyclo\S+)\)$")
 
 
 def as_parsed(name):
     """The name in the form the parser takes: no mark of the racemate, the geometry in front, no trivial name beside."""
-    name = RACEMATE.sub("", name)
+    name = GEOMETRY_APART.sub(r"\1-", BESIDE_IN_BRACKETS.sub("", RACEMATE.sub("", name)))
     inside = GEOMETRY_INSIDE.match(name)
     if inside:
         name = f"{inside[2]}-{inside[1]}-{inside[3]}"
@@ -32,6 +34,8 @@ def names():
     found = {e["Chemical"] for e in tables.package_table(tables.CRC) if any(e[f"Hf{p}"] for p in "slg")}
     for path in tables.ATCT.values():
         found |= {e["Chemical"] for e in tables.package_table(path)}
+    for table in tables.PHASE_CHANGES:
+        found |= {tables.tidy(e["Chemical"]) for e in tables.package_table(table.path) if e[table.column]}
     return sorted(found | {e["molecule"] for e in st.read_csv("enthalpies_strained.csv")})
 
 

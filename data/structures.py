@@ -63,6 +63,27 @@ def identify(cas, name):
     return None
 
 
+def identify_by_both(cas, name):
+    """(SMILES, finding) from number and name together; the name alone serves where the identifiers lack the number.
+
+    The finding says what speaks against the structure: that number and name mean different molecules or isomers. Of
+    the two the more explicit stands, so that a geometry that only one of them states is kept.
+    """
+    settled = override_for(cas, name)
+    by_number, by_name = identify(cas, name), FROM_NAMES.get(name)
+    if settled or not by_name or parse(by_number) is None:
+        return settled or by_number or by_name, ""
+    if molecule_key(by_number) == by_name:
+        return by_number, ""
+    if flat(by_number) != flat(by_name):
+        return by_number, f"the name means {by_name}"
+    if flat(by_name) == by_name:
+        return by_number, ""
+    if flat(by_number) == molecule_key(by_number):
+        return by_name, ""
+    return by_number, f"the name means {by_name}"
+
+
 def agrees_with_name(name, smiles):
     """Whether the rules of nomenclature read the same molecule out of the name."""
     read = FROM_NAMES.get(name)
@@ -71,6 +92,11 @@ def agrees_with_name(name, smiles):
 
 def parse(smiles):
     return Chem.MolFromSmiles(smiles) if smiles else None
+
+
+def flat(smiles):
+    """Canonical SMILES without stereochemistry."""
+    return Chem.MolToSmiles(parse(smiles), isomericSmiles=False)
 
 
 def elements(mol):
