@@ -97,7 +97,7 @@ def row(name, smiles, phase, value, stated_u, source, where, cas, kind, note):
         u, basis = float(stated_u) / coverage, "stated"
     filled["u_kj_per_mol"] = f"{u:.4g}"
     filled["u_basis"] = basis
-    excluded = st.exclusion_for(cas, name, phase)
+    excluded = st.exclusion_for(cas, name, phase, source)
     if filled["smiles"] in REFERENCE_KEYS:
         filled["use"] = "reference"
     elif excluded:

@@ -26,7 +26,7 @@ def _by_cas_or_name(rows):
 
 OVERRIDES = _by_cas_or_name(read_csv("structure_overrides.csv"))
 FROM_NAMES = {row["name"]: row["smiles"] for row in read_csv("structures_from_names.csv")}
-EXCLUSIONS = _by_cas_or_name(read_csv("exclusions.csv"))
+EXCLUSIONS = read_csv("exclusions.csv")
 
 
 def override_for(cas, name):
@@ -37,11 +37,15 @@ def override_for(cas, name):
     return None
 
 
-def exclusion_for(cas, name, phase):
-    """The stated reason why a row is not fitted, or None; a blank phase in the table means every phase."""
-    row = EXCLUSIONS.get(name) or EXCLUSIONS.get(cas)
-    if row and row["phase"] in ("", phase):
-        return row["use"]
+def exclusion_for(cas, name, phase, source=""):
+    """The stated reason why a row is not fitted, or None.
+
+    A blank phase or source in the table means every one; a line without a CAS number is for its name alone.
+    """
+    for row in EXCLUSIONS:
+        named = row["cas"] == cas if row["cas"] else row["name"] == name
+        if named and row["phase"] in ("", phase) and row["source"] in ("", source):
+            return row["use"]
     return None
 
 
