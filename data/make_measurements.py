@@ -176,7 +176,9 @@ def phase_change_rows(skipped):
             cas, name = entry["CAS"], tidy(entry["Chemical"])
             smiles, finding = st.identify_by_both(cas, name)
             smiles, why_not = belongs(smiles, cas, name)
-            if smiles and st.parse(smiles).GetNumHeavyAtoms() > HEAVY_ATOMS_MOST:
+            if smiles and st.isotopes(st.parse(smiles)):
+                why_not = "an isotope"
+            elif smiles and st.parse(smiles).GetNumHeavyAtoms() > HEAVY_ATOMS_MOST:
                 why_not = f"more than {HEAVY_ATOMS_MOST} atoms besides hydrogen: extrapolated, not measured"
             if why_not:
                 skipped[f"{table.source} ({table.phase}): {why_not}"] += 1

@@ -10,6 +10,7 @@ import warnings
 
 from py2opsin import py2opsin
 
+import make_gas_properties as gas
 import make_measurements as tables
 import structures as st
 
@@ -36,6 +37,8 @@ def names():
         found |= {e["Chemical"] for e in tables.package_table(path)}
     for table in tables.PHASE_CHANGES:
         found |= {tables.tidy(e["Chemical"]) for e in tables.package_table(table.path) if e[table.column]}
+    for path in (gas.TRC, gas.POLING, gas.JANAF):
+        found |= {tables.tidy(e["Chemical"]) for e in tables.package_table(path)}
     return sorted(found | {e["molecule"] for e in st.read_csv("enthalpies_strained.csv")})
 
 

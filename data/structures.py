@@ -107,6 +107,10 @@ def elements(mol):
     return {atom.GetSymbol() for atom in Chem.AddHs(mol).GetAtoms()}
 
 
+def isotopes(mol):
+    return any(atom.GetIsotope() for atom in mol.GetAtoms())
+
+
 def has_radical(mol):
     return any(atom.GetNumRadicalElectrons() for atom in mol.GetAtoms())
 
