@@ -1,4 +1,4 @@
-"""Compares every structure in measurements.csv with the formula, the InChIKey and the name of its row.
+"""Compares every structure in measurements.csv and the tables of the gas with the formula, the InChIKey and the name of its row.
 
 Run `python data/check_structures.py`. It prints what needs a human look and exits 1 when there is any; a finding that
 was looked at and found right stands in structures_reviewed.csv with the reason. `--all` prints those as well.
@@ -13,6 +13,7 @@ from rdkit import Chem
 
 import structures as st
 
+TABLES = ("measurements.csv", "gas_heat_capacities.csv", "gas_entropies.csv")
 GEOMETRY_WORD = re.compile(r"\b(cis|trans|exo|endo|meso)\b|\bDL-|\(\d*[EZRS](,\d*[EZRS])*\)|\d[αβ]|\b[αβ]-D-|\b[αβ]-L-")
 LETTER_OF_ENANTIOMER = re.compile(r"^[LDd]-|^S-|^\([RS]\)[- ]")
 # Words that fix a diastereomer without a stereo prefix.
@@ -94,7 +95,7 @@ def main():
     parser.add_argument("--all", action="store_true", help="print the findings that were reviewed as well")
     everything = parser.parse_args().all
     reviewed = {(r["name"], r["finding"]): r["verdict"] for r in st.read_csv("structures_reviewed.csv")}
-    rows = st.read_csv("measurements.csv")
+    rows = [row for table in TABLES for row in st.read_csv(table)]
     found = list(findings(rows))
     new = [f for f in found if (f[0]["name"], f[1]) not in reviewed]
     for row, kind, text in found if everything else new:

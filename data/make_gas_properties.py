@@ -25,6 +25,7 @@ JANAF_CP = "Heat Capacity/JANAF_1998_gas_Cp.json"
 SAME_VALUE = 0.15
 # Where a polynomial misses its own book's value at 298.15 K by more, J/(mol K), one of them is of another molecule.
 OWN_CONSTANT = 2
+GAS_CONSTANT = 8.314462618  # J/(mol K)
 DEFAULTS = {(row["property"], row["kind"]): row for row in st.read_csv("default_gas_uncertainties.csv")}
 
 
@@ -103,6 +104,23 @@ def sources(skipped):
                    row(entry, found, {S_COLUMN: f"{float(entry['S0g']):.2f}"}, "janaf-1998", JANAF, "evaluated", "s298"))
 
 
+def impossible(made):
+    """Whether a heat capacity falls with temperature or leaves 7/2 R to (3 N - 3/2) R, N atoms: translation and rotation
+    alone, and every vibration at its classical limit as well (a linear molecule; another has R/2 less)."""
+    values = [float(made[c]) for c in CP_COLUMNS if made[c]]
+    most = (3 * sum(st.counts_of(st.parse(made["smiles"])).values()) - 1.5) * GAS_CONSTANT
+    falls = any(later < earlier - SAME_VALUE for earlier, later in itertools.pairwise(values))
+    return falls or min(values) < 3.5 * GAS_CONSTANT - SAME_VALUE or max(values) > most + SAME_VALUE
+
+
+def exclude_impossible(pairs):
+    """An impossible heat capacity is not fitted, nor is the entropy that its source has from the same coefficients."""
+    for cp, s in pairs:
+        if cp and cp["use"] == "fit" and impossible(cp):
+            for made in filter(None, (cp, s)):
+                made["use"] = "impossible"
+
+
 def differences(one, other, columns):
     return [float(one[c]) - float(other[c]) for c in columns if one[c] and other[c]]
 
@@ -161,7 +179,9 @@ def write(name, rows, columns):
 
 def main():
     skipped = collections.Counter()
-    heat_capacities, entropies = zip(*sources(skipped))
+    pairs = list(sources(skipped))
+    exclude_impossible(pairs)
+    heat_capacities, entropies = zip(*pairs)
     write("gas_heat_capacities.csv", [r for r in heat_capacities if r], CP_COLUMNS)
     write("gas_entropies.csv", [r for r in entropies if r], (S_COLUMN,))
     for why, count in sorted(skipped.items()):
