@@ -14,7 +14,7 @@ const MAX_ENTRIES: usize = 256;
 pub struct Kind {
     /// The element.
     pub element: Element,
-    /// Its π bonds, which stand for its hybridisation (0 sp3, 1 sp2, 2 sp), where the class tells these apart.
+    /// Its π bonds, which stand for its hybridisation (0 sp3, 1 sp2, 2 sp), where the class tells these apart; one for aromaticity.
     pub pi_bonds: Option<u8>,
     /// Its hydrogens, where the class tells these apart.
     pub hydrogens: Option<u8>,
@@ -27,7 +27,7 @@ pub enum Entry {
     Element(Element),
     /// Heavy atoms of a kind.
     Atom(Kind),
-    /// Bonds between heavy atoms, the lower kind first.
+    /// Bonds between heavy atoms, the lower kind first; aromatic ones as such.
     Bond(Kind, Kind, BondOrder),
 }
 
@@ -53,7 +53,7 @@ impl Balance {
     /// Enters a molecule with its stoichiometric number.
     ///
     /// # Errors
-    /// [`ReactionError::TooManySpecies`] when there are too many different entries.
+    /// [`ReactionError::TooManyEntries`].
     pub fn add<const A: usize, const B: usize>(
         &mut self,
         number: i32,
@@ -73,12 +73,18 @@ impl Balance {
                 self.enter(Entry::Atom(kind), number)?;
             }
         }
-        for bond in molecule.bonds() {
+        for (index, bond) in molecule.bonds().iter().enumerate() {
+            // Which bonds of an aromatic ring are double is a choice.
+            let order = if molecule.is_aromatic_bond(index) {
+                BondOrder::Aromatic
+            } else {
+                bond.order
+            };
             let ends = bond
                 .atoms
                 .map(|end| kind(molecule, usize::from(end), [bond_pi, bond_hydrogens]));
             if let [Some(a), Some(b)] = ends {
-                self.enter(Entry::Bond(a.min(b), a.max(b), bond.order), number)?;
+                self.enter(Entry::Bond(a.min(b), a.max(b), order), number)?;
             }
         }
         Ok(())
@@ -102,7 +108,7 @@ impl Balance {
             known.1 += number;
             return Ok(());
         }
-        let full = ReactionError::TooManySpecies {
+        let full = ReactionError::TooManyEntries {
             capacity: MAX_ENTRIES,
         };
         self.entries.push((entry, number)).map_err(|_| full)
@@ -119,9 +125,11 @@ fn kind<const A: usize, const B: usize>(
     let [with_pi, with_hydrogens] = told;
     let bonds = molecule.neighbours(atom).iter();
     let pi_bonds = bonds
+        .filter(|n| !molecule.is_aromatic_bond(usize::from(n.bond)))
         .filter_map(|n| molecule.bonds().get(usize::from(n.bond)))
-        .map(|bond| bond.order.pairs() - 1)
-        .sum();
+        .fold(u8::from(molecule.is_aromatic_atom(atom)), |sum, bond| {
+            sum + bond.order.pairs() - 1
+        });
     (element != Element::H).then(|| Kind {
         element,
         pi_bonds: with_pi.then_some(pi_bonds),

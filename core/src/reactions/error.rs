@@ -19,6 +19,11 @@ pub enum ReactionError {
         /// How many it holds.
         capacity: usize,
     },
+    /// A balance has more different entries than it holds.
+    TooManyEntries {
+        /// How many it holds.
+        capacity: usize,
+    },
     /// A piece of the molecule, capped with hydrogens, is no molecule, or one larger than the capacity.
     Fragment(MoleculeError),
     /// The pieces do not add up to the molecule: multiple bonds close a ring of their own.
@@ -42,6 +47,9 @@ impl fmt::Display for ReactionError {
             ),
             Self::TooManySpecies { capacity } => {
                 write!(f, "more than {capacity} different molecules take part")
+            }
+            Self::TooManyEntries { capacity } => {
+                write!(f, "more than {capacity} kinds of atoms and bonds take part")
             }
             Self::Fragment(error) => write!(f, "a piece of the molecule: {error}"),
             Self::Unbalanced => write!(

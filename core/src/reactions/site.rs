@@ -38,7 +38,7 @@ impl Site {
             }
         }
         for unit in system.units() {
-            let links = system.links_of(unit).count() as i32;
+            let links = system.links_of(unit).fold(0, |links, _| links + 1);
             match class {
                 ReactionClass::Isodesmic => {
                     emit(-links, Self::Hydride(unit))?;

@@ -50,6 +50,7 @@ pub(super) fn card(place: &str, review: &SubstanceReview) -> String {
         line("  estimate", with_factor(gas.estimate));
     }
     strain(review, &mut line);
+    conventions(review, &mut line);
     line(
         "oxygen balance",
         format!("{} %", fixed(review.oxygen_balance_percent, 1)),
@@ -106,6 +107,23 @@ fn strain(review: &SubstanceReview, line: &mut impl FnMut(&str, String)) {
                 atoms.join(" "),
                 sizes.join(" ")
             ),
+        );
+    }
+}
+
+/// The strain by reactions and by the CH2 increment, where these are defined; the group increments stand above.
+fn conventions(review: &SubstanceReview, line: &mut impl FnMut(&str, String)) {
+    let rows = review.strain_conventions.iter();
+    let shown = rows.filter_map(|row| Some((row, row.quantity?, row.reaction.as_ref()?)));
+    for (index, (row, quantity, reaction)) in shown.enumerate() {
+        let value = rounded(quantity.value_kj_per_mol, quantity.expanded_kj_per_mol);
+        line(
+            if index == 0 {
+                "by other conventions"
+            } else {
+                ""
+            },
+            format!("{} kJ/mol {}: {reaction}", value.interval(), row.convention),
         );
     }
 }

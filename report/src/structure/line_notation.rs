@@ -1,8 +1,8 @@
-//! SMILES of a molecule, for showing: bonds localised, configurations and isotopes left out.
+//! SMILES of a molecule, for showing: configurations and isotopes left out.
 
 use std::fmt::Write;
 
-use tautring_core::molecule::{BondOrder, implicit_hydrogens};
+use tautring_core::molecule::{BondOrder, Element, implicit_hydrogens};
 
 use super::capacity::HostMolecule;
 
@@ -25,6 +25,7 @@ pub fn line_notation(molecule: &HostMolecule) -> String {
         children: vec![Vec::new(); molecule.atoms().len()],
         closures: vec![Vec::new(); molecule.atoms().len()],
         rings: 0,
+        written: Vec::new(),
     };
     // An end of the molecule reads best as a beginning, a carbon before others.
     let start = (0..molecule.atoms().len()).min_by_key(|&atom| {
@@ -51,6 +52,8 @@ struct Walk<'m> {
     /// Of each atom the ring closures, with their bonds; the bond's symbol stands where it opens.
     closures: Vec<Vec<(usize, usize)>>,
     rings: usize,
+    /// Number that each ring closure is written with, in the order of writing.
+    written: Vec<usize>,
 }
 
 impl Walk<'_> {
@@ -80,16 +83,21 @@ impl Walk<'_> {
         size
     }
 
-    fn write(&self, atom: usize, text: &mut String) {
+    fn write(&mut self, atom: usize, text: &mut String) {
         self.write_atom(atom, text);
-        for &(ring, bond) in &self.closures[atom] {
+        for (ring, bond) in std::mem::take(&mut self.closures[atom]) {
             text.push_str(self.symbol(bond));
-            if ring > 9 {
+            let known = self.written.iter().position(|&known| known == ring);
+            let number = known.unwrap_or_else(|| {
+                self.written.push(ring);
+                self.written.len() - 1
+            }) + 1;
+            if number > 9 {
                 text.push('%');
             }
-            text.push_str(&ring.to_string());
+            text.push_str(&number.to_string());
         }
-        let children = &self.children[atom];
+        let children = std::mem::take(&mut self.children[atom]);
         for (index, &(next, bond)) in children.iter().enumerate() {
             let branch = index + 1 < children.len();
             text.push_str(if branch { "(" } else { "" });
@@ -101,16 +109,14 @@ impl Walk<'_> {
 
     fn write_atom(&self, index: usize, text: &mut String) {
         let atom = self.molecule.atoms()[index];
-        let symbol = atom.element.symbol();
-        let around = self.molecule.neighbours(index).iter();
-        let pairs = around
-            .map(|n| self.molecule.bonds()[usize::from(n.bond)].order.pairs())
-            .sum();
-        let bare = !matches!(symbol, "H" | "Si")
-            && atom.charge == 0
-            && implicit_hydrogens(atom.element, 0, pairs) == Some(atom.hydrogens);
-        if bare {
-            text.push_str(symbol);
+        let aromatic = self.molecule.is_aromatic_atom(index);
+        let symbol = if aromatic {
+            atom.element.symbol().to_lowercase()
+        } else {
+            atom.element.symbol().to_owned()
+        };
+        if atom.charge == 0 && self.implied(index) == Some(atom.hydrogens) {
+            text.push_str(&symbol);
             return;
         }
         // Writing to a String cannot fail.
@@ -133,11 +139,35 @@ impl Walk<'_> {
         text.push(']');
     }
 
+    /// The hydrogens that a reader takes for granted on a neutral atom without brackets; `None` where brackets are needed.
+    fn implied(&self, index: usize) -> Option<u8> {
+        let element = self.molecule.atoms()[index].element;
+        let around = self.molecule.neighbours(index);
+        match (element, self.molecule.is_aromatic_atom(index)) {
+            (Element::C, true) => Some(3 - around.len().min(3) as u8),
+            (Element::N | Element::O | Element::S, true) => Some(0),
+            (_, true) | (Element::H | Element::Si, false) => None,
+            (_, false) => {
+                let bonds = around
+                    .iter()
+                    .map(|n| self.molecule.bonds()[usize::from(n.bond)]);
+                implicit_hydrogens(element, 0, bonds.map(|b| b.order.pairs()).sum())
+            }
+        }
+    }
+
     fn symbol(&self, bond: usize) -> &'static str {
-        match self.molecule.bonds()[bond].order {
+        if self.molecule.is_aromatic_bond(bond) {
+            return "";
+        }
+        let found = self.molecule.bonds()[bond];
+        let aromatic = |end: u16| self.molecule.is_aromatic_atom(usize::from(end));
+        match found.order {
             BondOrder::Double => "=",
             BondOrder::Triple => "#",
-            BondOrder::Single | BondOrder::Aromatic => "",
+            // Between aromatic atoms no symbol would mean an aromatic bond.
+            _ if found.atoms.into_iter().all(aromatic) => "-",
+            _ => "",
         }
     }
 }
@@ -158,6 +188,10 @@ mod tests {
             "OB(O)C1=CCCC1(F)Cl",
             "C1CC12CC2C3(CC3)C(C)(C)P(C)C",
             "[C-]#[N+]C1CO1",
+            "c1ccccc1-c1ccccn1",
+            "Cn1ccc(=O)[nH]1",
+            "C[n+]1ccccc1C(=O)[O-]",
+            "C1=Cc2cccc3cccc1c23",
         ] {
             let one = Structure::from_smiles(given).unwrap();
             let text = line_notation(&one.molecule);
