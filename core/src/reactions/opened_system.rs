@@ -179,7 +179,7 @@ fn is_welded<const A: usize, const B: usize>(molecule: &Molecule<A, B>, bond: us
     };
     let charge = |atom: u16| {
         let atom = molecule.atoms().get(usize::from(atom));
-        atom.map_or(0, |a| a.charge)
+        atom.map_or(0, |a| a.charge.signum())
     };
     let [a, b] = found.atoms;
     let opposite = charge(a) * charge(b) < 0;

@@ -93,26 +93,28 @@ fn strain(review: &SubstanceReview, line: &mut impl FnMut(&str, String)) {
         line("ring systems", strain.ring_systems.len().to_string());
     }
     for system in &strain.ring_systems {
-        let atoms: Vec<_> = system
-            .atoms
-            .iter()
-            .map(|atom| (atom + 1).to_string())
-            .collect();
         let sizes: Vec<_> = system.sizes.iter().map(ToString::to_string).collect();
         line(
             "  ring system",
             format!(
                 "{}: atoms {}; ring sizes {}",
                 with_factor(system.quantity),
-                atoms.join(" "),
+                numbers(&system.atoms),
                 sizes.join(" ")
             ),
         );
     }
 }
 
+/// `1 2 3` for the atoms 0, 1, 2.
+fn numbers(atoms: &[usize]) -> String {
+    let numbers: Vec<_> = atoms.iter().map(|atom| (atom + 1).to_string()).collect();
+    numbers.join(" ")
+}
+
 /// The strain by reactions and by the CH2 increment, where these are defined; the group increments stand above.
 fn conventions(review: &SubstanceReview, line: &mut impl FnMut(&str, String)) {
+    let several = review.strain.ring_systems.len() > 1;
     let rows = review.strain_conventions.iter();
     let shown = rows.filter_map(|row| Some((row, row.quantity?, row.reaction.as_ref()?)));
     for (index, (row, quantity, reaction)) in shown.enumerate() {
@@ -123,7 +125,16 @@ fn conventions(review: &SubstanceReview, line: &mut impl FnMut(&str, String)) {
             } else {
                 ""
             },
-            format!("{} kJ/mol {}: {reaction}", value.interval(), row.convention),
+            format!(
+                "{} kJ/mol {}{}: {reaction}",
+                value.interval(),
+                row.convention,
+                if several {
+                    format!(", atoms {}", numbers(&row.atoms))
+                } else {
+                    String::new()
+                }
+            ),
         );
     }
 }

@@ -80,13 +80,17 @@ fn table(system: &[ConventionStrain]) -> Block {
             );
             let mut cells = vec![Inline::from(row.convention), reaction];
             cells.extend(numbers);
+            let estimate = row
+                .estimate
+                .map(|q| rounded(q.value_kj_per_mol, q.expanded_kj_per_mol).interval());
+            cells.push(estimate.map_or("—".into(), Inline::from));
             cells.push(row.note.as_str().into());
             cells
         })
         .collect();
     Block::Table(Table {
         caption: format!(
-            "Strain of the ring system of atoms {} by convention, gas phase, 298.15 K. Structures as SMILES; the first is the molecule itself. U (95 %) is for the true value, k = U/u.",
+            "Strain of the ring system of atoms {} by convention, gas phase, 298.15 K. Structures as SMILES; the first is the molecule itself. U (95 %) is for the true value, k = U/u. The estimate is that of the additivity alone, with its covariance.",
             atom_numbers(atoms)
         )
         .into(),
@@ -97,6 +101,7 @@ fn table(system: &[ConventionStrain]) -> Block {
             Column::numbers("u, kJ/mol"),
             Column::numbers("U, kJ/mol"),
             Column::numbers("k"),
+            Column::numbers("Estimate ± U, kJ/mol"),
             Column::words("Rests on"),
         ],
         rows,
