@@ -4,10 +4,12 @@
 use std::collections::{BTreeMap, BTreeSet};
 
 use serde::Deserialize;
+use tautring_core::additivity::gas::{GAS, MEASUREMENTS};
 use tautring_core::molecule::Formula;
 use tautring_core::reactions::{
-    Balance, ReactionClass, ReactionError, carbon_free_enthalpies, species,
+    Balance, Difference, ReactionClass, ReactionError, carbon_free_enthalpies, species,
 };
+use tautring_report::review::Reviewer;
 use tautring_report::structure::{HostMolecule, MAX_ATOMS, MAX_BONDS, Structure, line_notation};
 use tautring_tests::folder::{reference, top};
 use tautring_tests::random::XorShift;
@@ -253,6 +255,42 @@ fn each_ring_system_is_opened_alone() {
         ring(&cyclopropane),
         [line_notation(&self::molecule("CC(C)N1CC1"))]
     );
+}
+
+/// The core's own strain: the same bits for any order of the atoms, and what the report calls the estimate.
+#[test]
+fn the_core_gives_the_strain_of_the_report() {
+    let reviewer = Reviewer::new().unwrap_or_else(|e| panic!("{e}"));
+    let mut random = XorShift::new(20_260_302);
+    let mut workspace = vec![0.0; MEASUREMENTS];
+    let mut strain = |molecule: &HostMolecule, class| {
+        let difference = Difference::<4096>::strain::<MAX_ATOMS, MAX_BONDS, MAX_ATOMS, MAX_BONDS>(
+            molecule, 0, class,
+        )
+        .unwrap_or_else(|e| panic!("{e}"));
+        let estimate = difference.estimate(&GAS, &mut workspace);
+        let estimate = estimate.unwrap_or_else(|e| panic!("{e}"));
+        (estimate.value_kj_per_mol, estimate.u_kj_per_mol())
+    };
+    for smiles in ["C1CC2CCC1C2", "C1NOC1", "C1CNCCOC1", "C1SC1C", "C=C1CC1"] {
+        let structure = Structure::from_smiles(smiles).unwrap_or_else(|e| panic!("{e}"));
+        let review = reviewer.review(smiles, &structure, &[], false);
+        let review = review.unwrap_or_else(|e| panic!("{e}"));
+        for class in ReactionClass::ALL {
+            let (value, u) = strain(&structure.molecule, class);
+            let moved = renumber(&structure.molecule, &mut random);
+            let (again, u_again) = strain(&moved, class);
+            assert_eq!(value.to_bits(), again.to_bits(), "{smiles}");
+            assert_eq!(u.to_bits(), u_again.to_bits(), "{smiles}");
+            let mut rows = review.strain_conventions.iter();
+            let row = rows.find(|row| row.convention == class.name());
+            let reported = row.and_then(|row| row.estimate);
+            let reported = reported.unwrap_or_else(|| panic!("{smiles}: no {}", class.name()));
+            // The report solves for the weights, the core for the value: rounding errors of sums over a thousand measurements.
+            assert!((reported.value_kj_per_mol - value).abs() < 1e-6, "{smiles}");
+            assert!((reported.u_kj_per_mol - u).abs() < 1e-6, "{smiles}");
+        }
+    }
 }
 
 #[test]

@@ -14,8 +14,8 @@ pub const MAX_SPECIES: usize = 128;
 /// Calls `visit` with each molecule that takes part in the opening of a ring system, beside the molecule itself, and with its
 /// stoichiometric number: negative for those that react with it, positive for products.
 ///
-/// Identical molecules are one, and those on both sides are cancelled. Their order follows the order of the atoms. A molecule visited has
-/// at most `S` atoms and `T` bonds; those of a molecule whose substituents are large need as much room as that.
+/// Identical molecules are one, and those on both sides are cancelled. Products come last; the order does not depend on that of the atoms. A
+/// molecule visited has at most `S` atoms and `T` bonds; those of a molecule whose substituents are large need as much room as that.
 ///
 /// ```
 /// use tautring_core::molecule::{Atom, BondOrder, Element, MoleculeBuilder};
@@ -76,6 +76,8 @@ pub fn species<const A: usize, const B: usize, const S: usize, const T: usize>(
     if elements.iter().any(|&total| total != 0) {
         return Err(ReactionError::Unbalanced);
     }
+    // Sums over the molecules then run in one order, whatever the order of the atoms.
+    tallies.sort_unstable_by_key(|&(signature, number, _)| (number > 0, signature));
     for (_, number, site) in tallies.into_iter().filter(|tally| tally.1 != 0) {
         visit(number, &site.molecule(&opened)?)?;
     }
