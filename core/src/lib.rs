@@ -5,7 +5,7 @@
 //!
 //! Layers, imports run downwards only:
 //!
-//! 1. [`strain`]: conventional strain of a molecule and of each of its ring systems
+//! 1. [`strain`]: conventional strain of a molecule and of each of its ring systems; [`reactions`]: reactions that define strain
 //! 2. [`additivity`], [`mechanics`]: enthalpies of formation with uncertainties; angle bend and torsion
 //! 3. [`geometry`]: distance, angle and dihedral with derivatives
 //! 4. [`molecule`]: elements, the molecular graph, rings, aromaticity; [`oxygen_balance`]
@@ -20,6 +20,7 @@ pub mod mechanics;
 pub mod molecule;
 pub mod oxygen_balance;
 pub mod quantities;
+pub mod reactions;
 pub mod strain;
 
 /// Version of this crate, for reports that state what made their numbers.

@@ -128,6 +128,14 @@ fn complaints(row: &Row, line: &Value, blind: bool) -> Vec<String> {
         "strain per gram = strain / molar mass",
     );
     c.text("/strain/convention");
+    for row in c.list("/strain_conventions") {
+        let named = row["convention"].is_string() && row["note"].is_string();
+        let both = row["value_kj_per_mol"].is_number() == row["u_kj_per_mol"].is_number();
+        let positive = row["u_kj_per_mol"].as_f64().is_none_or(|u| u > 0.0);
+        let reaction = row["reaction"].as_str();
+        let arrow = reaction.is_none_or(|text| text.contains(" -> "));
+        c.demand(named && both && positive && arrow, "strain_conventions[]");
+    }
 
     for ring in c.list("/rings") {
         let atoms = ring["atoms"].as_array().map_or(0, Vec::len) as u64;

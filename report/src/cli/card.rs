@@ -50,6 +50,7 @@ pub(super) fn card(place: &str, review: &SubstanceReview) -> String {
         line("  estimate", with_factor(gas.estimate));
     }
     strain(review, &mut line);
+    conventions(review, &mut line);
     line(
         "oxygen balance",
         format!("{} %", fixed(review.oxygen_balance_percent, 1)),
@@ -92,19 +93,47 @@ fn strain(review: &SubstanceReview, line: &mut impl FnMut(&str, String)) {
         line("ring systems", strain.ring_systems.len().to_string());
     }
     for system in &strain.ring_systems {
-        let atoms: Vec<_> = system
-            .atoms
-            .iter()
-            .map(|atom| (atom + 1).to_string())
-            .collect();
         let sizes: Vec<_> = system.sizes.iter().map(ToString::to_string).collect();
         line(
             "  ring system",
             format!(
                 "{}: atoms {}; ring sizes {}",
                 with_factor(system.quantity),
-                atoms.join(" "),
+                numbers(&system.atoms),
                 sizes.join(" ")
+            ),
+        );
+    }
+}
+
+/// `1 2 3` for the atoms 0, 1, 2.
+fn numbers(atoms: &[usize]) -> String {
+    let numbers: Vec<_> = atoms.iter().map(|atom| (atom + 1).to_string()).collect();
+    numbers.join(" ")
+}
+
+/// The strain by reactions and by the CH2 increment, where these are defined; the group increments stand above.
+fn conventions(review: &SubstanceReview, line: &mut impl FnMut(&str, String)) {
+    let several = review.strain.ring_systems.len() > 1;
+    let rows = review.strain_conventions.iter();
+    let shown = rows.filter_map(|row| Some((row, row.quantity?, row.reaction.as_ref()?)));
+    for (index, (row, quantity, reaction)) in shown.enumerate() {
+        let value = rounded(quantity.value_kj_per_mol, quantity.expanded_kj_per_mol);
+        line(
+            if index == 0 {
+                "by other conventions"
+            } else {
+                ""
+            },
+            format!(
+                "{} kJ/mol {}{}: {reaction}",
+                value.interval(),
+                row.convention,
+                if several {
+                    format!(", atoms {}", numbers(&row.atoms))
+                } else {
+                    String::new()
+                }
             ),
         );
     }

@@ -8,6 +8,7 @@ mod block;
 mod cautions;
 mod checks;
 mod compile;
+mod conventions;
 mod drawing;
 mod entry;
 mod formation;

@@ -4,7 +4,7 @@ use super::bibliography::{Bibliography, Citations};
 use super::block::{Block, Column, Document, Table};
 use super::inline::Inline;
 use super::inputs::Inputs;
-use super::{blocks_from_markdown, cautions, checks, provenance, substance, summary};
+use super::{blocks_from_markdown, cautions, checks, conventions, provenance, substance, summary};
 
 /// The strain report of a case.
 ///
@@ -23,6 +23,7 @@ pub fn report(inputs: &Inputs) -> Document {
     for (index, entry) in inputs.entries.iter().enumerate() {
         blocks.extend(substance::blocks(index, entry, &mut citations));
     }
+    blocks.extend(conventions::definitions(inputs, &mut citations));
     blocks.extend(checks::blocks(&inputs.checks, &mut citations));
     blocks.extend(sign_off());
     blocks.extend(provenance::bibliography(&citations));

@@ -4,7 +4,7 @@ use serde_json::{Value, json};
 
 use super::error::RenderError;
 use crate::document::Inputs;
-use crate::review::SubstanceReview;
+use crate::review::{ConventionStrain, SubstanceReview};
 
 /// The results of one substance under the keys that other programs rely on, and more beside them.
 ///
@@ -19,6 +19,7 @@ pub fn contract(review: &SubstanceReview) -> Value {
         .iter()
         .map(|atoms| json!({ "atoms": atoms, "size": atoms.len() }))
         .collect();
+    let conventions: Vec<_> = review.strain_conventions.iter().map(convention).collect();
     json!({
         "input": review.input,
         "formula": review.formula,
@@ -36,6 +37,7 @@ pub fn contract(review: &SubstanceReview) -> Value {
             "solid": not_computed,
         },
         "strain": strain,
+        "strain_conventions": conventions,
         "rings": rings,
         "account": {
             "bend_kj_per_mol": null,
@@ -55,6 +57,22 @@ pub fn contract(review: &SubstanceReview) -> Value {
         "evidence": gas.evidence,
         "evidence_share": gas.evidence_share,
         "flags": review.flags,
+    })
+}
+
+/// The strain of a ring system by one convention; null where it is not defined.
+fn convention(row: &ConventionStrain) -> Value {
+    json!({
+        "convention": row.convention,
+        "atoms": row.atoms,
+        "reaction": row.reaction,
+        "value_kj_per_mol": row.quantity.map(|q| q.value_kj_per_mol),
+        "u_kj_per_mol": row.quantity.map(|q| q.u_kj_per_mol),
+        "expanded_kj_per_mol": row.quantity.map(|q| q.expanded_kj_per_mol),
+        "basis": row.basis,
+        "estimate": row.estimate,
+        "participants": row.participants,
+        "note": row.note,
     })
 }
 

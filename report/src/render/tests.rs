@@ -5,8 +5,9 @@ use std::fs;
 use super::{contract, html, json, markdown, write_all};
 use crate::document::{Digest, Entry, Header, Inputs, Particulars, RingReference, Stated, report};
 use crate::review::{
-    Agreement, Basis, CheckOutcome, CheckValue, Comparison, Evidence, FormationEnthalpy,
-    MeasuredEnthalpy, Quantity, RingStrain, Strain, SubstanceReview,
+    Agreement, Basis, CheckOutcome, CheckValue, Comparison, ConventionStrain, Evidence,
+    FormationEnthalpy, MeasuredEnthalpy, Participant, Quantity, RingStrain, Strain,
+    SubstanceReview,
 };
 use crate::structure::Structure;
 
@@ -38,6 +39,27 @@ fn comparison(measured: f64, agreement: Agreement, from_case: bool) -> Compariso
         settled_by: (agreement == Agreement::Settled)
             .then(|| "The safety office: wrong sample.".to_owned()),
         keeps_estimate: true,
+    }
+}
+
+fn convention(convention: &'static str, reaction: Option<&str>) -> ConventionStrain {
+    ConventionStrain {
+        convention,
+        atoms: vec![0, 1, 2],
+        reaction: reaction.map(str::to_owned),
+        quantity: reaction.map(|_| quantity(115.5, 0.6)),
+        estimate: reaction.map(|_| quantity(120.4, 4.5)),
+        basis: reaction.map(|_| Basis::Measured),
+        participants: vec![Participant {
+            number: -3,
+            smiles: "CC".to_owned(),
+            formula: "C2H6".to_owned(),
+            name: Some("Ethane".to_owned()),
+            basis: Basis::Measured,
+            measured: Some(quantity(-84.0, 0.1)),
+            source: Some("crc2014".to_owned()),
+        }],
+        note: "a note".to_owned(),
     }
 }
 
@@ -91,6 +113,10 @@ fn review(name: &str, smiles: &str, comparisons: Vec<Comparison>) -> SubstanceRe
                 quantity: quantity(115.6, 1.3),
             }],
         },
+        strain_conventions: vec![
+            convention("homodesmotic", Some("C1CC1 + 3 CC -> 3 CCC")),
+            convention("homologous CH2 increment", None),
+        ],
         rings,
         flags: vec!["No measured condensed-phase value.".to_owned()],
         structure,
@@ -262,6 +288,7 @@ fn json_holds_the_keys_that_other_programs_rely_on() {
             "molar_mass_g_per_mol",
             "enthalpy_of_formation",
             "strain",
+            "strain_conventions",
             "rings",
             "account",
             "openings",
@@ -274,6 +301,8 @@ fn json_holds_the_keys_that_other_programs_rely_on() {
     );
     assert_eq!(keys["enthalpy_of_formation"]["gas"]["basis"], "measured");
     assert_eq!(keys["rings"][0]["size"], 3);
+    assert_eq!(keys["strain_conventions"][0]["value_kj_per_mol"], 115.5);
+    assert!(keys["strain_conventions"][1]["value_kj_per_mol"].is_null());
     assert!(keys["account"]["bend_kj_per_mol"].is_null());
 
     let report: serde_json::Value = serde_json::from_str(&json(&sample).unwrap()).unwrap();

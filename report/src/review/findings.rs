@@ -141,6 +141,46 @@ pub struct Strain {
     pub ring_systems: Vec<RingStrain>,
 }
 
+/// The strain of one ring system by one convention.
+#[derive(Clone, Debug, Serialize)]
+pub struct ConventionStrain {
+    /// Name of the convention.
+    pub convention: &'static str,
+    /// Atoms of the ring system, indices from 0 in the order of the input.
+    pub atoms: Vec<usize>,
+    /// The reaction whose negative enthalpy is the strain, in SMILES without configurations; `None` for a sum of increments.
+    pub reaction: Option<String>,
+    /// The strain, from measured enthalpies of formation where there are any; `None` where the convention does not define one.
+    pub quantity: Option<Quantity>,
+    /// The strain by the additivity alone, with its covariance.
+    pub estimate: Option<Quantity>,
+    /// Whether all of `quantity` is measured.
+    pub basis: Option<Basis>,
+    /// The molecules of the reaction beside the molecule itself.
+    pub participants: Vec<Participant>,
+    /// What the value rests on, or why there is none.
+    pub note: String,
+}
+
+/// A molecule that takes part in a reaction.
+#[derive(Clone, Debug, Serialize)]
+pub struct Participant {
+    /// Stoichiometric number: negative for those that react with the molecule, positive for products.
+    pub number: i32,
+    /// Its structure, without configurations.
+    pub smiles: String,
+    /// Formula in Hill order.
+    pub formula: String,
+    /// Its name, if its enthalpy was measured.
+    pub name: Option<String>,
+    /// What its enthalpy rests on.
+    pub basis: Basis,
+    /// Its measured enthalpy of formation, if there is one; otherwise it is estimated together with the rest of the reaction.
+    pub measured: Option<Quantity>,
+    /// Bibliography key of the measured enthalpy.
+    pub source: Option<String>,
+}
+
 /// All that is found for one substance.
 #[derive(Clone, Debug, Serialize)]
 pub struct SubstanceReview {
@@ -158,6 +198,8 @@ pub struct SubstanceReview {
     pub gas: FormationEnthalpy,
     /// Strain.
     pub strain: Strain,
+    /// The strain of each ring system by several conventions.
+    pub strain_conventions: Vec<ConventionStrain>,
     /// Relevant rings: atoms in ring order, indices from 0.
     pub rings: Vec<Vec<usize>>,
     /// Plain-language warnings, most important first.

@@ -101,7 +101,7 @@ fn comparison(
 }
 
 /// A measured value, taken as normally distributed, since its source says no more.
-fn measured(value_kj_per_mol: f64, u_kj_per_mol: f64) -> Quantity {
+pub(super) fn measured(value_kj_per_mol: f64, u_kj_per_mol: f64) -> Quantity {
     Quantity {
         value_kj_per_mol,
         u_kj_per_mol,

@@ -3,6 +3,7 @@
 //! Nothing here computes chemistry; the core does.
 
 mod check_values;
+mod conventions;
 mod findings;
 mod measured;
 mod reviewer;
@@ -11,8 +12,9 @@ mod warnings;
 
 pub use check_values::{CheckValueError, check_values};
 pub use findings::{
-    Agreement, Basis, CheckOutcome, CheckValue, Comparison, Evidence, FormationEnthalpy,
-    MeasuredEnthalpy, Quantity, RingStrain, Strain, SubstanceReview, TELLING_KJ_PER_MOL,
+    Agreement, Basis, CheckOutcome, CheckValue, Comparison, ConventionStrain, Evidence,
+    FormationEnthalpy, MeasuredEnthalpy, Participant, Quantity, RingStrain, Strain,
+    SubstanceReview, TELLING_KJ_PER_MOL,
 };
 pub use measured::{CaseMeasurement, Settled, UNSTATED_KJ_PER_MOL};
 pub use reviewer::{ReviewError, Reviewer};

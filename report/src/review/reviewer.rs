@@ -9,8 +9,10 @@ use tautring_core::additivity::{
 };
 use tautring_core::oxygen_balance::oxygen_balance_percent;
 use tautring_core::quantities::KJ_PER_KCAL;
+use tautring_core::reactions::ReactionError;
 use tautring_core::strain;
 
+use super::conventions::Subject;
 use super::findings::{
     Basis, Evidence, FormationEnthalpy, Quantity, RingStrain, Strain, SubstanceReview,
 };
@@ -44,6 +46,8 @@ pub enum ReviewError {
     Data(String),
     /// The core has no estimate.
     Additivity(AdditivityError),
+    /// The core has no enthalpy of a reaction.
+    Reaction(ReactionError),
 }
 
 impl fmt::Display for ReviewError {
@@ -54,6 +58,7 @@ impl fmt::Display for ReviewError {
                 "{reason}; make the tables anew with `cargo run --release --bin tautring-fit`"
             ),
             Self::Additivity(error) => error.fmt(f),
+            Self::Reaction(error) => error.fmt(f),
         }
     }
 }
@@ -66,6 +71,12 @@ impl From<AdditivityError> for ReviewError {
     }
 }
 
+impl From<ReactionError> for ReviewError {
+    fn from(error: ReactionError) -> Self {
+        Self::Reaction(error)
+    }
+}
+
 impl From<DatasetError> for ReviewError {
     fn from(error: DatasetError) -> Self {
         Self::Data(error.to_string())
@@ -74,9 +85,9 @@ impl From<DatasetError> for ReviewError {
 
 /// The model with the published measurements that it rests on.
 pub struct Reviewer {
-    model: &'static Model<'static>,
+    pub(super) model: &'static Model<'static>,
     data: Dataset,
-    by_identity: BTreeMap<String, Vec<usize>>,
+    pub(super) by_identity: BTreeMap<String, Vec<usize>>,
     by_skeleton: BTreeMap<String, Vec<usize>>,
 }
 
@@ -162,12 +173,26 @@ impl Reviewer {
         };
 
         let strain = self.strain(molecule, &features, molar_mass, left_out, basis, quantity)?;
+        let gas = FormationEnthalpy {
+            quantity,
+            basis,
+            estimate: quantity_of(&estimate),
+            comparisons,
+            evidence,
+            evidence_share,
+        };
+        let strain_conventions = self.conventions(&Subject {
+            molecule,
+            gas: &gas,
+            strain: &strain,
+            left_out,
+        })?;
         let flags = warnings::of(
             self.model,
             structure,
             &features,
             &estimate,
-            &comparisons,
+            &gas.comparisons,
             own.len() > same.len() && same.is_empty(),
         );
         Ok(SubstanceReview {
@@ -176,15 +201,9 @@ impl Reviewer {
             formula: formula.to_string(),
             molar_mass_g_per_mol: molar_mass,
             oxygen_balance_percent: oxygen_balance_percent(&formula),
-            gas: FormationEnthalpy {
-                quantity,
-                basis,
-                estimate: quantity_of(&estimate),
-                comparisons,
-                evidence,
-                evidence_share,
-            },
+            gas,
             strain,
+            strain_conventions,
             rings: molecule
                 .rings()
                 .iter()
@@ -304,7 +323,7 @@ impl Reviewer {
         (listed, share)
     }
 
-    fn workspace(&self, left_out: usize) -> Vec<f64> {
+    pub(super) fn workspace(&self, left_out: usize) -> Vec<f64> {
         vec![0.0; self.model.len() * (left_out.min(MAX_LEFT_OUT) + 1)]
     }
 }
