@@ -1,6 +1,6 @@
 //! An estimate and everything that it is made of, as bits.
 
-use tautring_core::additivity::gas::{GAS, MEASUREMENTS};
+use tautring_core::additivity::fitted::{FITTED, WORKSPACE};
 use tautring_core::additivity::{AdditivityError, Features, count};
 use tautring_report::structure::HostMolecule;
 
@@ -23,8 +23,8 @@ struct Counted {
 /// Slower than a fingerprint by a triangular system of as many equations as there are measurements.
 pub fn estimate(molecule: &HostMolecule) -> Option<(u64, u64)> {
     let features: Features<4096> = count(molecule).ok()?;
-    let mut workspace = vec![0.0; MEASUREMENTS];
-    let estimate = GAS.estimate(&features, &mut workspace).ok()?;
+    let mut workspace = vec![0.0; WORKSPACE];
+    let estimate = FITTED.estimate(&features, &mut workspace).ok()?;
     let u = estimate.u_kj_per_mol();
     Some((estimate.value_kj_per_mol.to_bits(), u.to_bits()))
 }
@@ -44,7 +44,7 @@ pub fn fingerprint(molecule: &HostMolecule) -> Fingerprint {
             .iter()
             .map(|count| count.to_bits())
             .collect(),
-        enthalpy: GAS.value(&features).to_bits(),
+        enthalpy: FITTED.value(&features).to_bits(),
     });
     Fingerprint {
         formula: molecule.formula().to_string(),

@@ -114,6 +114,12 @@ fn complaints(row: &Row, line: &Value, blind: bool) -> Vec<String> {
         &["measured", "estimated"]
     };
     c.demand(bases.contains(&basis), &format!("basis {basis}"));
+    let grade = c.text("/enthalpy_of_formation/gas/grade");
+    let grades: &[&str] = match basis {
+        "measured" => &["measured"],
+        _ => &["well supported", "extrapolated", "outside"],
+    };
+    c.demand(grades.contains(&grade), &format!("grade {grade}"));
 
     let strain = c.number("/strain/value_kj_per_mol");
     c.demand(

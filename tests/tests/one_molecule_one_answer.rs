@@ -21,6 +21,7 @@ const ORDERS: usize = 3;
 #[derive(Deserialize)]
 struct Measurement {
     smiles: String,
+    phase: String,
 }
 
 #[derive(Deserialize)]
@@ -33,7 +34,10 @@ struct Spelling {
 
 fn measured() -> BTreeSet<String> {
     let table: Vec<Measurement> = rows(&top().join("data/measurements.csv"));
-    table.into_iter().map(|row| row.smiles).collect()
+    let formation = table
+        .into_iter()
+        .filter(|row| ["g", "l", "s"].contains(&row.phase.as_str()));
+    formation.map(|row| row.smiles).collect()
 }
 
 fn spellings() -> Vec<Spelling> {

@@ -15,6 +15,7 @@ const ORDERED_OTHERWISE: [(&str, &str); 3] = [("BrH", "HBr"), ("ClH", "HCl"), ("
 #[derive(Deserialize)]
 struct Measurement {
     smiles: String,
+    phase: String,
 }
 
 #[derive(Deserialize)]
@@ -54,7 +55,10 @@ fn differing(found: impl Fn(&Row, &HostMolecule) -> (String, String)) -> Vec<Str
 #[test]
 fn every_measured_molecule_is_in_the_reference_file() {
     let measured: Vec<Measurement> = rows(&top().join("data/measurements.csv"));
-    let measured: BTreeSet<String> = measured.into_iter().map(|row| row.smiles).collect();
+    let formation = measured
+        .into_iter()
+        .filter(|row| ["g", "l", "s"].contains(&row.phase.as_str()));
+    let measured: BTreeSet<String> = formation.map(|row| row.smiles).collect();
     let table: Vec<Row> = rows(&reference("data_set.csv"));
     let known: BTreeSet<String> = table.into_iter().map(|row| row.smiles).collect();
     let stale: Vec<_> = known.symmetric_difference(&measured).collect();

@@ -4,7 +4,7 @@
 use std::collections::{BTreeMap, BTreeSet};
 
 use serde::Deserialize;
-use tautring_core::additivity::gas::{GAS, MEASUREMENTS};
+use tautring_core::additivity::fitted::{FITTED, WORKSPACE};
 use tautring_core::molecule::Formula;
 use tautring_core::reactions::{
     Balance, Difference, ReactionClass, ReactionError, carbon_free_enthalpies, species,
@@ -262,13 +262,13 @@ fn each_ring_system_is_opened_alone() {
 fn the_core_gives_the_strain_of_the_report() {
     let reviewer = Reviewer::new().unwrap_or_else(|e| panic!("{e}"));
     let mut random = XorShift::new(20_260_302);
-    let mut workspace = vec![0.0; MEASUREMENTS];
+    let mut workspace = vec![0.0; WORKSPACE];
     let mut strain = |molecule: &HostMolecule, class| {
         let difference = Difference::<4096>::strain::<MAX_ATOMS, MAX_BONDS, MAX_ATOMS, MAX_BONDS>(
             molecule, 0, class,
         )
         .unwrap_or_else(|e| panic!("{e}"));
-        let estimate = difference.estimate(&GAS, &mut workspace);
+        let estimate = difference.estimate(&FITTED, &mut workspace);
         let estimate = estimate.unwrap_or_else(|e| panic!("{e}"));
         (estimate.value_kj_per_mol, estimate.u_kj_per_mol())
     };

@@ -15,6 +15,11 @@ pub enum AdditivityError {
     },
     /// The graph is not one neutral molecule.
     Molecule(MoleculeError),
+    /// Counting the Kekulé structures takes more than this many steps.
+    TooManyKekuleStructures {
+        /// How many steps were taken.
+        steps: u32,
+    },
     /// The molecule holds no carbon: the data are those of organic compounds.
     NoCarbon,
     /// Storage handed in is smaller than needed.
@@ -34,6 +39,10 @@ pub enum AdditivityError {
 impl fmt::Display for AdditivityError {
     fn fmt(&self, f: &mut fmt::Formatter<'_>) -> fmt::Result {
         match *self {
+            Self::TooManyKekuleStructures { steps } => write!(
+                f,
+                "the aromatic system has more Kekulé structures than {steps} steps count; take a smaller model compound"
+            ),
             Self::TooManyFeatures { capacity } => {
                 write!(
                     f,

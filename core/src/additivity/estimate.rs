@@ -20,9 +20,13 @@ pub struct Estimate {
 }
 
 impl Estimate {
-    /// Standard uncertainty of the true value, kJ/mol: the root of the sum of both variances.
+    /// Standard uncertainty of the true value, kJ/mol: half the width of the 68 % interval.
+    ///
+    /// `u² = σ² + (t s)²` with the 68.27 % quantile t of Student's distribution. For a normal distribution that is the standard deviation; Student's
+    /// with two degrees of freedom has none.
     pub fn u_kj_per_mol(&self) -> f64 {
-        sqrt(self.model_variance + self.tail_variance)
+        let tail = student_quantile(&ONE_SIGMA, self.tail_degrees_of_freedom);
+        sqrt(self.model_variance + tail * tail * self.tail_variance)
     }
 
     /// Expanded uncertainty (95 %) of the true value, kJ/mol.
@@ -33,8 +37,8 @@ impl Estimate {
     /// # Accuracy
     /// Within 2 % of the quantile of the sum of both, by simulation for two degrees of freedom and σ from 0 to 8 s.
     pub fn expanded_kj_per_mol(&self) -> f64 {
-        let normal = student_quantile(f64::INFINITY);
-        let tail = student_quantile(self.tail_degrees_of_freedom);
+        let normal = student_quantile(&NINETY_FIVE, f64::INFINITY);
+        let tail = student_quantile(&NINETY_FIVE, self.tail_degrees_of_freedom);
         sqrt(normal * normal * self.model_variance + tail * tail * self.tail_variance)
     }
 
@@ -51,24 +55,38 @@ impl Estimate {
     }
 }
 
-/// Quantile of Student's distribution for a two-sided 95 % interval, for two degrees of freedom or more.
-///
-/// A polynomial in the reciprocal of the degrees of freedom.
+/// Polynomial in the reciprocal of the degrees of freedom that gives the quantile of Student's distribution for a two-sided 95 % interval.
 ///
 /// # Accuracy
 /// Better than 4 in 10 million from two degrees of freedom to infinity, against the quantiles of `scipy.stats.t` to which it was fitted.
-fn student_quantile(degrees_of_freedom: f64) -> f64 {
-    const COEFFICIENTS: [f64; 7] = [
-        1.959_964_725_208_04,
-        2.372_190_053_298_324,
-        2.824_602_610_409_485,
-        2.534_045_484_402_069,
-        1.694_884_167_770_036,
-        0.504_644_651_663_655,
-        0.767_065_264_348_848,
-    ];
+const NINETY_FIVE: [f64; 7] = [
+    1.959_964_725_208_04,
+    2.372_190_053_298_324,
+    2.824_602_610_409_485,
+    2.534_045_484_402_069,
+    1.694_884_167_770_036,
+    0.504_644_651_663_655,
+    0.767_065_264_348_848,
+];
+
+/// The same for a two-sided interval of 68.27 %, one standard deviation of a normal distribution.
+///
+/// # Accuracy
+/// Better than 1 in 10 million, as above.
+const ONE_SIGMA: [f64; 7] = [
+    1.000_000_057_700_067,
+    0.499_993_732_728_915,
+    0.250_158_551_375_245,
+    0.060_973_240_391_875,
+    -0.000_074_589_075_571,
+    0.047_625_837_853_745,
+    -0.023_331_043_126_760,
+];
+
+/// Quantile of Student's distribution, for two degrees of freedom or more.
+fn student_quantile(coefficients: &[f64], degrees_of_freedom: f64) -> f64 {
     let n = 1.0 / degrees_of_freedom;
-    COEFFICIENTS
+    coefficients
         .iter()
         .rev()
         .fold(0.0, |sum, coefficient| sum * n + coefficient)
@@ -76,21 +94,24 @@ fn student_quantile(degrees_of_freedom: f64) -> f64 {
 
 #[cfg(test)]
 mod tests {
-    use super::student_quantile;
+    use super::{NINETY_FIVE, ONE_SIGMA, student_quantile};
 
     #[test]
     fn quantiles_are_those_of_the_printed_table() {
-        // gum-2008, table G.2, p = 95 %, printed to two decimals.
-        for (nu, printed) in [
-            (2.0, 4.30),
-            (3.0, 3.18),
-            (4.0, 2.78),
-            (5.0, 2.57),
-            (10.0, 2.23),
-            (50.0, 2.01),
+        // gum-2008, table G.2, p = 68.27 % and 95 %, printed to two decimals.
+        for (nu, one_sigma, ninety_five) in [
+            (2.0, 1.32, 4.30),
+            (3.0, 1.20, 3.18),
+            (4.0, 1.14, 2.78),
+            (5.0, 1.11, 2.57),
+            (10.0, 1.05, 2.23),
+            (50.0, 1.01, 2.01),
+            (f64::INFINITY, 1.00, 1.96),
         ] {
-            assert!((student_quantile(nu) - printed).abs() < 0.006, "{nu}");
+            let found = student_quantile(&ONE_SIGMA, nu);
+            assert!((found - one_sigma).abs() < 0.006, "{nu}: {found}");
+            let found = student_quantile(&NINETY_FIVE, nu);
+            assert!((found - ninety_five).abs() < 0.006, "{nu}: {found}");
         }
-        assert!((student_quantile(f64::INFINITY) - 1.96).abs() < 0.005);
     }
 }

@@ -2,10 +2,10 @@
 
 use heapless::Vec;
 
-use super::Level;
 use super::deviation::Deviation;
 use super::error::AdditivityError;
 use super::key::Key;
+use super::{Level, Part, Property};
 
 /// How often a feature occurs.
 #[derive(Clone, Copy, Debug, PartialEq)]
@@ -82,6 +82,26 @@ impl<const F: usize> Features<F> {
             .terms
             .iter()
             .try_for_each(|t| self.add(t.key, factor * t.count))
+    }
+
+    /// The features of another property of the molecule whose gas-phase enthalpy these features stand for.
+    ///
+    /// # Errors
+    /// [`AdditivityError::TooManyFeatures`] when the capacity is used up.
+    pub fn of(&self, property: Property) -> Result<Self, AdditivityError> {
+        let coefficients = property.coefficients();
+        let mut features = Self {
+            terms: Vec::new(),
+            deviation: self.deviation.in_parts(coefficients),
+        };
+        for (part, coefficient) in Part::ALL.into_iter().zip(coefficients) {
+            for term in &self.terms {
+                if coefficient != 0.0 && term.key.level().is_some_and(|level| part.has(level)) {
+                    features.add(term.key.in_part(part), coefficient * term.count)?;
+                }
+            }
+        }
+        Ok(features)
     }
 
     /// Only the terms of the levels that `keep` accepts.

@@ -1,24 +1,40 @@
 //! Keys that name the features of a molecular graph.
 
-use super::Level;
+use super::{Level, Part};
 
-/// Names one feature: the level in the highest byte, below it what the feature counts.
+/// How many classes of features each level has: without heteroatoms, with one, with several.
+pub const CLASSES: usize = 3;
+
+/// Names one feature: part, level and class in the highest bits, below them what the feature counts.
 ///
-/// What it counts is mixed into 56 bits, in smooth levels into 48 bits above the ring size. The fit checks that no two
-/// features of the data share a key.
+/// | bits | what |
+/// | --- | --- |
+/// | 62 to 63 | part |
+/// | 56 to 61 | level |
+/// | 54 to 55 | class: how many heteroatoms the feature names, two and more being one class |
+/// | 0 to 53 | the tokens, mixed; in smooth levels the lowest 8 are the ring size |
+///
+/// The fit checks that no two features of the data share a key.
 #[derive(Clone, Copy, Debug, PartialEq, Eq, PartialOrd, Ord, Hash)]
 #[cfg_attr(feature = "serde", derive(serde::Serialize))]
 pub struct Key(u64);
 
 impl Key {
-    /// The key of a level's feature that the `tokens` describe; their order matters.
-    pub fn new(level: Level, tokens: &[u64]) -> Self {
-        Self(((level as u64) << 56) | (mix(tokens) >> 8))
+    /// The key of a level's feature that names `heteroatoms` heteroatoms and that the `tokens` describe; their order matters.
+    pub fn new(level: Level, heteroatoms: usize, tokens: &[u64]) -> Self {
+        let class = heteroatoms.min(CLASSES - 1) as u64;
+        Self(((level as u64) << 56) | class << 54 | (mix(tokens) >> 10))
     }
 
-    /// The key of a smooth level's feature: a family of rings and a ring size (at most 63).
-    pub fn smooth(level: Level, family: &[u64], size: usize) -> Self {
-        Self(((level as u64) << 56) | ((mix(family) >> 16) << 8) | size.min(63) as u64)
+    /// The key of a smooth level's feature: a ring size (at most 63).
+    pub fn smooth(level: Level, size: usize) -> Self {
+        Self(((level as u64) << 56) | size.min(63) as u64)
+    }
+
+    /// The same feature of another part.
+    #[must_use]
+    pub const fn in_part(self, part: Part) -> Self {
+        Self(self.0 & !(0b11 << 62) | (part as u64) << 62)
     }
 
     /// The 64 bits of the key.
@@ -31,9 +47,23 @@ impl Key {
         Self(bits)
     }
 
+    /// The part.
+    pub fn part(self) -> Part {
+        match self.0 >> 62 {
+            0 => Part::Gas,
+            1 => Part::Vaporisation,
+            _ => Part::Fusion,
+        }
+    }
+
     /// The level.
     pub fn level(self) -> Option<Level> {
-        Level::ALL.get((self.0 >> 56) as usize).copied()
+        Level::ALL.get((self.0 >> 56 & 0x3f) as usize).copied()
+    }
+
+    /// The class: 0 without heteroatoms, 1 with one, 2 with several.
+    pub const fn class(self) -> usize {
+        (self.0 >> 54 & 0b11) as usize
     }
 
     /// For a smooth level: the ring size.
@@ -41,7 +71,7 @@ impl Key {
         (self.0 & 0xff) as usize
     }
 
-    /// For a smooth level: whether both keys belong to one family of rings.
+    /// For a smooth level: whether both keys are of one part and level.
     pub const fn same_family(self, other: Self) -> bool {
         self.0 >> 8 == other.0 >> 8
     }

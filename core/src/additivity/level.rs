@@ -39,6 +39,8 @@ pub enum Level {
     AromaticPair,
     /// Aromatic rings by size, and atoms that fuse them.
     AromaticRing,
+    /// Logarithm of the number of Kekulé structures.
+    Resonance,
     /// Rings by size, smooth in size.
     RingSize,
     /// Ring atoms by type and ring size, once for each ring.
@@ -51,13 +53,15 @@ pub enum Level {
     RingEnvironment,
     /// Pairs of atoms three bonds apart across a ring bond, by class.
     RingVicinal,
-    /// Relative configuration in rings.
+    /// Trans double bonds in rings.
     RingConfiguration,
+    /// Pairs of ring substituents by the sides of the ring on which they stand.
+    RingSides,
 }
 
 impl Level {
     /// Every level, in the order of the keys.
-    pub const ALL: [Self; 23] = [
+    pub const ALL: [Self; 25] = [
         Self::Element,
         Self::Atom,
         Self::BondOrder,
@@ -74,6 +78,7 @@ impl Level {
         Self::Cis,
         Self::AromaticPair,
         Self::AromaticRing,
+        Self::Resonance,
         Self::RingSize,
         Self::RingAtom,
         Self::RingBond,
@@ -81,6 +86,7 @@ impl Level {
         Self::RingEnvironment,
         Self::RingVicinal,
         Self::RingConfiguration,
+        Self::RingSides,
     ];
 
     /// Name of the level, as reports print it.
@@ -102,6 +108,7 @@ impl Level {
             Self::Cis => "cis",
             Self::AromaticPair => "aromatic pair",
             Self::AromaticRing => "aromatic ring",
+            Self::Resonance => "resonance",
             Self::RingSize => "ring size",
             Self::RingAtom => "ring atom",
             Self::RingBond => "ring bond",
@@ -109,6 +116,7 @@ impl Level {
             Self::RingEnvironment => "ring environment",
             Self::RingVicinal => "ring vicinal pair",
             Self::RingConfiguration => "ring configuration",
+            Self::RingSides => "ring sides",
         }
     }
 

@@ -1,14 +1,15 @@
 //! The fitted model: value, uncertainty and weights of the measurements for a molecule or a difference of molecules.
 
-use super::cholesky::{dot, factorise, packed_len, solve_lower, solve_upper};
+use super::Property;
+use super::cholesky::{dot, solve_lower, solve_upper};
+use super::covariance::{Covariance, coefficient, related, split};
 use super::error::AdditivityError;
 use super::estimate::Estimate;
-use super::features::{Features, Term};
+use super::features::Features;
 use super::key::Key;
+use super::part::Part;
 use super::prior::Prior;
-
-/// Most measurements that can be left out of one estimate.
-pub const MAX_LEFT_OUT: usize = 12;
+use super::without::{MAX_LEFT_OUT, Without};
 
 /// A fitted additivity: a prior and the measurements that it was conditioned on.
 ///
@@ -18,20 +19,27 @@ pub const MAX_LEFT_OUT: usize = 12;
 pub struct Model<'a> {
     /// The prior.
     pub prior: Prior,
-    /// Keys of the features that occur in the measurements, ascending.
+    /// Keys of the features that occur in the measured molecules, ascending, as those of the gas part.
     pub keys: &'a [u64],
-    /// For each key the sum over measurements of count times α.
-    pub duals: &'a [f64],
-    /// For each key where its entries start in `rows` and `counts`; one more for the end.
-    pub starts: &'a [u32],
-    /// Measurements in which the key occurs.
-    pub rows: &'a [u16],
-    /// How often it occurs in them.
-    pub counts: &'a [u8],
+    /// For each of [`Part::ALL`] and each key the sum over measurements of coefficient times count times α.
+    pub duals: [&'a [f64]; Part::ALL.len()],
+    /// All measurements.
+    pub covariance: Covariance<'a>,
+    /// A part of the measurements that knows most of what all know, for small memories.
+    pub compact: Covariance<'a>,
     /// The measured values, kJ/mol.
     pub values: &'a [f64],
-    /// Packed lower Cholesky factor of K, each number as little-endian bytes.
-    pub factor: &'a [[u8; 8]],
+    /// For each measured molecule the variance of its deviation from additivity in each of [`Part::ALL`] after the fit, kJ²/mol².
+    pub deviations: &'a [[f32; Part::ALL.len()]],
+}
+
+/// A molecule that was measured, and what of it is to be estimated.
+#[derive(Clone, Copy, Debug, PartialEq, Eq)]
+pub struct MeasuredMolecule {
+    /// Index of the molecule in the model.
+    pub molecule: usize,
+    /// What is estimated.
+    pub property: Property,
 }
 
 impl Model<'_> {
@@ -45,6 +53,11 @@ impl Model<'_> {
         self.values.is_empty()
     }
 
+    /// How many numbers an estimate works in.
+    pub const fn workspace_len(&self) -> usize {
+        self.covariance.workspace_len()
+    }
+
     /// The enthalpy that features stand for, kJ/mol.
     pub fn value<const F: usize>(&self, features: &Features<F>) -> f64 {
         features.terms().iter().fold(0.0, |sum, term| {
@@ -54,100 +67,161 @@ impl Model<'_> {
 
     /// The contribution of one feature, kJ/mol; 0 for one that was never measured.
     pub fn coefficient(&self, key: Key) -> f64 {
-        self.related(key).fold(0.0, |sum, (index, covariance)| {
-            sum + covariance * self.duals.get(index).copied().unwrap_or(0.0)
+        let duals = match key.part() {
+            Part::Gas => self.duals[0],
+            Part::Vaporisation => self.duals[1],
+            Part::Fusion => self.duals[2],
+        };
+        related(&self.prior, self.keys, key).fold(0.0, |sum, (index, covariance)| {
+            sum + covariance * duals.get(index).copied().unwrap_or(0.0)
         })
     }
 
     /// Value and uncertainty.
     ///
     /// # Errors
-    /// [`AdditivityError::Storage`] when `workspace` is shorter than [`Model::len`].
+    /// [`AdditivityError::Storage`] when `workspace` is shorter than [`Model::workspace_len`].
     pub fn estimate<const F: usize>(
         &self,
         features: &Features<F>,
         workspace: &mut [f64],
     ) -> Result<Estimate, AdditivityError> {
-        let k = take(workspace, self.len(), self.len())?.0;
-        self.covariances(features.terms(), k);
-        solve_lower(self.factor, k);
-        Ok(self.assemble(features, self.value(features), dot(k, k)))
+        let explained = self
+            .covariance
+            .explained(&self.prior, self.keys, features, workspace)?;
+        Ok(self.assemble(features, self.value(features), explained))
+    }
+
+    /// The same value with an uncertainty that takes a part of the measurements to work out, and is never smaller.
+    ///
+    /// # Errors
+    /// [`AdditivityError::Storage`] when `workspace` is shorter than [`Covariance::workspace_len`] of `compact`.
+    pub fn estimate_compact<const F: usize>(
+        &self,
+        features: &Features<F>,
+        workspace: &mut [f64],
+    ) -> Result<Estimate, AdditivityError> {
+        let explained = self
+            .compact
+            .explained(&self.prior, self.keys, features, workspace)?;
+        Ok(self.assemble(features, self.value(features), explained))
     }
 
     /// Value and uncertainty without some of the measurements, and the weights of the others.
     ///
     /// The weights stand in the first [`Model::len`] numbers of `workspace`; the value is their sum times the measured values.
-    /// With K⁻¹ of all measurements known, those of a subset follow without a new factorisation.
     ///
     /// # Errors
-    /// [`AdditivityError::Storage`] when `workspace` is shorter than [`Model::len`] times one more than the number left
-    /// out, or more than [`MAX_LEFT_OUT`] are left out.
+    /// [`AdditivityError::Storage`] when `workspace` is shorter than [`Model::workspace_len`].
     pub fn estimate_without<const F: usize>(
         &self,
         features: &Features<F>,
-        left_out: &[usize],
+        without: &Without<'_>,
         workspace: &mut [f64],
     ) -> Result<Estimate, AdditivityError> {
-        let n = self.len();
-        let m = left_out.len();
-        if m > MAX_LEFT_OUT {
-            return Err(AdditivityError::Storage {
-                needed: m,
-                given: MAX_LEFT_OUT,
-            });
+        let weights = self.covariances(features, workspace)?;
+        let (value, explained) = self.condition(without, weights);
+        Ok(self.assemble(features, value, explained))
+    }
+
+    /// Value and uncertainty of a property of a molecule that was itself measured in another, and the weights of all measurements.
+    ///
+    /// A molecule's deviation from additivity is the same in every phase, so its own measurements tell more than additivity does: a measured
+    /// liquid leaves of the gas only the vaporisation to estimate. `features` are those of the property.
+    ///
+    /// # Errors
+    /// As for [`Model::estimate_without`].
+    pub fn estimate_measured<const F: usize>(
+        &self,
+        features: &Features<F>,
+        about: MeasuredMolecule,
+        without: &Without<'_>,
+        workspace: &mut [f64],
+    ) -> Result<Estimate, AdditivityError> {
+        let weights = self.covariances(features, workspace)?;
+        let deviation = self.deviations.get(about.molecule).copied();
+        let deviation = deviation.unwrap_or_default().map(f64::from);
+        let wanted = about.property.coefficients();
+        // What the nearest own measurement does not have in common with the property keeps the heavy tails.
+        let mut apart = f64::INFINITY;
+        let mut prior = 0.0;
+        for (d, w) in deviation.iter().zip(wanted) {
+            prior += d * w * w;
         }
-        let (weights, columns) = take(workspace, n * (m + 1), n)?;
-        self.covariances(features.terms(), weights);
-        for &row in left_out {
+        for (row, (entry, &(molecule, property))) in
+            weights.iter_mut().zip(self.covariance.rows).enumerate()
+        {
+            if usize::from(molecule) != about.molecule || without.left_out.contains(&row) {
+                continue;
+            }
+            let mut differs = 0.0;
+            for (part, (d, w)) in Part::ALL.into_iter().zip(deviation.iter().zip(wanted)) {
+                let own = coefficient(property, part);
+                *entry += d * w * own;
+                differs += d * (w - own) * (w - own);
+            }
+            apart = apart.min(differs);
+        }
+        let (value, explained) = self.condition(without, weights);
+        let additive = self.assemble(features, value, explained);
+        if apart.is_infinite() {
+            return Ok(additive);
+        }
+        let increments = self.prior.covariance(features.terms(), features.terms());
+        let total = (increments + prior - explained).max(0.0);
+        let tail_variance = apart.min(total);
+        Ok(Estimate {
+            model_variance: total - tail_variance,
+            tail_variance,
+            ..additive
+        })
+    }
+
+    /// Prior covariances of features with the measurements, in the first numbers of a workspace.
+    fn covariances<'w, const F: usize>(
+        &self,
+        features: &Features<F>,
+        workspace: &'w mut [f64],
+    ) -> Result<&'w mut [f64], AdditivityError> {
+        let (k, by_molecule) = split(workspace, self.workspace_len(), self.len())?;
+        self.covariance
+            .with_measurements(&self.prior, self.keys, features.terms(), k, by_molecule);
+        Ok(k)
+    }
+
+    /// Turns covariances with the measurements into weights of those that are not left out; value and explained variance.
+    fn condition(&self, without: &Without<'_>, weights: &mut [f64]) -> (f64, f64) {
+        let factor = self.covariance.factor;
+        for &row in without.left_out {
             if let Some(entry) = weights.get_mut(row) {
                 *entry = 0.0;
             }
         }
-        // Weights of the subset lose exactly what they weigh after the projection, so k is kept for the variance.
-        let mut projected = [0.0; MAX_LEFT_OUT];
-        let mut block = [0.0; packed_len(MAX_LEFT_OUT)];
-        solve_lower(self.factor, weights);
+        solve_lower(factor, weights);
         let mut explained = dot(weights, weights);
-        solve_upper(self.factor, weights);
-        for (i, (&row, column)) in left_out
-            .iter()
-            .zip(columns.chunks_exact_mut(n.max(1)))
-            .enumerate()
-        {
-            column.fill(0.0);
-            if let Some(entry) = column.get_mut(row) {
-                *entry = 1.0;
-            }
-            solve_lower(self.factor, column);
-            solve_upper(self.factor, column);
-            if let (Some(p), Some(&w)) = (projected.get_mut(i), weights.get(row)) {
-                *p = w;
-            }
-            for (j, &other) in left_out.iter().enumerate().take(i + 1) {
-                if let (Some(entry), Some(&value)) =
-                    (block.get_mut(packed_len(i) + j), column.get(other))
-                {
-                    *entry = value;
-                }
-            }
+        solve_upper(factor, weights);
+        let mut storage = [0.0; MAX_LEFT_OUT];
+        let projected = storage.get_mut(..without.left_out.len()).unwrap_or(&mut []);
+        for (p, &row) in projected.iter_mut().zip(without.left_out) {
+            *p = weights.get(row).copied().unwrap_or(0.0);
         }
-        let block = block.get_mut(..packed_len(m)).unwrap_or(&mut []);
-        let projected = projected.get_mut(..m).unwrap_or(&mut []);
-        factorise(block)?;
-        solve_lower(block, projected);
+        solve_lower(without.block(), projected);
         explained -= dot(projected, projected);
-        solve_upper(block, projected);
-        for (&p, column) in projected.iter().zip(columns.chunks_exact(n.max(1))) {
+        solve_upper(without.block(), projected);
+        for (&p, column) in projected
+            .iter()
+            .zip(without.columns.chunks_exact(self.len().max(1)))
+        {
             for (weight, &value) in weights.iter_mut().zip(column) {
                 *weight -= p * value;
             }
         }
-        for &row in left_out {
+        for &row in without.left_out {
             if let Some(entry) = weights.get_mut(row) {
                 *entry = 0.0;
             }
         }
-        Ok(self.assemble(features, dot(weights, self.values), explained))
+        (dot(weights, self.values), explained)
     }
 
     fn assemble<const F: usize>(
@@ -165,70 +239,4 @@ impl Model<'_> {
             tail_degrees_of_freedom: self.prior.degrees_of_freedom,
         }
     }
-
-    /// Prior covariance of features with every measurement.
-    fn covariances(&self, terms: &[Term], k: &mut [f64]) {
-        k.fill(0.0);
-        for term in terms {
-            for (index, covariance) in self.related(term.key) {
-                let start = self.starts.get(index).map_or(0, |&s| s as usize);
-                let end = self.starts.get(index + 1).map_or(0, |&s| s as usize);
-                let rows = self.rows.get(start..end).unwrap_or(&[]);
-                let counts = self.counts.get(start..end).unwrap_or(&[]);
-                for (&row, &count) in rows.iter().zip(counts) {
-                    if let Some(entry) = k.get_mut(usize::from(row)) {
-                        *entry += covariance * term.count * f64::from(count);
-                    }
-                }
-            }
-        }
-    }
-
-    /// The measured features that a feature is correlated with: index and prior covariance.
-    fn related(&self, key: Key) -> impl Iterator<Item = (usize, f64)> {
-        let level = key.level();
-        let tau = level.map_or(0.0, |l| self.prior.tau(l));
-        let smooth = level.is_some_and(super::Level::is_smooth);
-        let low = self.keys.partition_point(|&k| {
-            if smooth {
-                k >> 8 < key.bits() >> 8
-            } else {
-                k < key.bits()
-            }
-        });
-        self.keys
-            .iter()
-            .enumerate()
-            .skip(low)
-            .map(|(index, &bits)| (index, Key::from_bits(bits)))
-            .take_while(move |&(_, other)| {
-                if smooth {
-                    other.same_family(key)
-                } else {
-                    other == key
-                }
-            })
-            .map(move |(index, other)| {
-                let correlation = if smooth {
-                    self.prior
-                        .size_correlation(key.ring_size(), other.ring_size())
-                } else {
-                    1.0
-                };
-                (index, tau * tau * correlation)
-            })
-    }
-}
-
-/// The first `first` numbers of a workspace and the rest, when it holds `needed`.
-fn take(
-    workspace: &mut [f64],
-    needed: usize,
-    first: usize,
-) -> Result<(&mut [f64], &mut [f64]), AdditivityError> {
-    let given = workspace.len();
-    if given < needed {
-        return Err(AdditivityError::Storage { needed, given });
-    }
-    Ok(workspace.split_at_mut(first))
 }

@@ -1,21 +1,22 @@
 //! The prior: how much a feature of each level may contribute.
 
-use super::Level;
 use super::deviation::{CONTRIBUTIONS, Deviation};
 use super::features::Term;
+use super::key::{CLASSES, Key};
+use super::{Level, Part};
 use crate::float::{exp, ln};
 
 /// Prior standard deviations of the levels and of what additivity cannot reach.
 #[derive(Clone, Copy, Debug, PartialEq)]
 #[cfg_attr(feature = "serde", derive(serde::Serialize))]
 pub struct Prior {
-    /// Standard deviation of one feature of each level in [`Level::ALL`], kJ/mol.
-    pub tau_kj_per_mol: [f64; Level::ALL.len()],
+    /// Standard deviation of one feature of each of [`Part::ALL`], each level in [`Level::ALL`] and each class, kJ/mol.
+    pub tau_kj_per_mol: [[[f64; CLASSES]; Level::ALL.len()]; Part::ALL.len()],
     /// Width of the squared-exponential correlation between ring sizes, in the natural logarithm of the size.
     pub ring_width: f64,
     /// Scale of the heavy-tailed deviation of a molecule from additivity for one heavy atom of each element in
     /// [`Element::ALL`](crate::molecule::Element::ALL), then for one non-aromatic ring, one polar pair and one
-    /// unsaturated atom, kJ/mol; their squares add up.
+    /// unsaturated atom; for the vaporisation part and then for the fusion part one for the molecule and one for each of those, kJ/mol. Their squares add up.
     pub deviation_kj_per_mol: [f64; CONTRIBUTIONS],
     /// Degrees of freedom of the heavy-tailed distributions.
     pub degrees_of_freedom: f64,
@@ -33,7 +34,7 @@ impl Prior {
             let Some(level) = term.key.level() else {
                 continue;
             };
-            let tau = self.tau(level);
+            let tau = self.tau(term.key);
             if level.is_smooth() {
                 for other in b.iter().filter(|t| t.key.same_family(term.key)) {
                     let correlation =
@@ -51,12 +52,23 @@ impl Prior {
         total
     }
 
-    /// Prior standard deviation of one feature of a level, kJ/mol.
-    pub fn tau(&self, level: Level) -> f64 {
+    /// Prior standard deviation of a feature, kJ/mol.
+    pub fn tau(&self, key: Key) -> f64 {
+        key.level().map_or(0.0, |level| {
+            self.tau_of(key.part(), level)
+                .get(key.class())
+                .copied()
+                .unwrap_or(0.0)
+        })
+    }
+
+    /// Prior standard deviations of the classes of a level, kJ/mol.
+    pub fn tau_of(&self, part: Part, level: Level) -> [f64; CLASSES] {
         self.tau_kj_per_mol
-            .get(level as usize)
+            .get(part as usize)
+            .and_then(|levels| levels.get(level as usize))
             .copied()
-            .unwrap_or(0.0)
+            .unwrap_or([0.0; CLASSES])
     }
 
     /// Squared scale of a deviation from additivity, kJ²/mol².
@@ -69,7 +81,7 @@ impl Prior {
     }
 
     /// Prior correlation of the strain of rings of two sizes.
-    pub(super) fn size_correlation(&self, n: usize, m: usize) -> f64 {
+    pub fn size_correlation(&self, n: usize, m: usize) -> f64 {
         if n == m {
             return 1.0;
         }

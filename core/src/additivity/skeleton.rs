@@ -195,6 +195,40 @@ impl<'m, const A: usize, const B: usize> Skeleton<'m, A, B> {
         self.bond_rings.get(bond).copied().unwrap_or(0)
     }
 
+    /// How many heteroatoms there are among some atoms and the partners of their double and triple bonds: 0, 1, or 2 for several.
+    ///
+    /// So many does a feature name that tells those atoms' types.
+    pub(super) fn heteroatoms(&self, atoms: &[usize]) -> usize {
+        let partners = atoms.iter().flat_map(|&atom| {
+            self.heavy_neighbours(atom)
+                .filter(|(n, _)| matches!(self.order_token(usize::from(n.bond)), 2 | 3))
+                .map(|(n, _)| usize::from(n.atom))
+        });
+        self.distinct_heteroatoms(atoms.iter().copied().chain(partners))
+    }
+
+    /// How many heteroatoms there are among some atoms: 0, 1, or 2 for several. So many does a feature name that tells their classes only.
+    pub(super) fn heteroatoms_among(&self, atoms: &[usize]) -> usize {
+        self.distinct_heteroatoms(atoms.iter().copied())
+    }
+
+    fn distinct_heteroatoms(&self, atoms: impl Iterator<Item = usize>) -> usize {
+        let mut first = None;
+        for atom in atoms {
+            let carbon = self
+                .site(atom)
+                .is_none_or(|site| site.kind.element_token() == Element::C as u64);
+            if carbon || first == Some(atom) {
+                continue;
+            }
+            if first.is_some() {
+                return 2;
+            }
+            first = Some(atom);
+        }
+        usize::from(first.is_some())
+    }
+
     /// Whether a bond is in a ring of any kind.
     pub(super) fn is_ring_bond(&self, bond: usize) -> bool {
         !self.molecule.bond_ring_sizes(bond).is_empty()

@@ -212,20 +212,11 @@ const fn stir(digest: u64, number: u64) -> u64 {
 
 /// 1 or 2 for the two configurations, told by the ligands in order of rank, implicit ones first.
 fn tetrahedral_code(mark: &TetrahedralStereo, rank: &impl Fn(u16) -> u16) -> u8 {
-    let keys = mark.ligands.map(|ligand| match ligand {
+    let clockwise = mark.is_clockwise_by(|ligand| match ligand {
         Ligand::Implicit => 0,
         Ligand::Atom(atom) => u32::from(rank(atom)) + 1,
     });
-    let inversions = keys
-        .iter()
-        .enumerate()
-        .map(|(i, a)| keys.iter().skip(i + 1).filter(|b| a > *b).count())
-        .sum::<usize>();
-    if mark.clockwise == inversions.is_multiple_of(2) {
-        1
-    } else {
-        2
-    }
+    if clockwise { 1 } else { 2 }
 }
 
 fn count_cells(colours: &[u16]) -> usize {

@@ -96,6 +96,19 @@ pub struct TetrahedralStereo {
     pub clockwise: bool,
 }
 
+impl TetrahedralStereo {
+    /// Whether the ligands, the one of the lowest key being looked from, run clockwise in ascending order of `key`.
+    pub(crate) fn is_clockwise_by(&self, key: impl Fn(Ligand) -> u32) -> bool {
+        let keys = self.ligands.map(key);
+        let inversions = keys
+            .iter()
+            .enumerate()
+            .map(|(i, a)| keys.iter().skip(i + 1).filter(|b| a > *b).count())
+            .sum::<usize>();
+        self.clockwise == inversions.is_multiple_of(2)
+    }
+}
+
 /// One end of a bond as seen from an atom.
 #[derive(Clone, Copy, Debug, PartialEq, Eq)]
 pub struct Neighbour {

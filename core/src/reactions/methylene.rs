@@ -68,14 +68,14 @@ fn alkane(carbons: usize) -> Result<Molecule<16, 16>, ReactionError> {
 #[cfg(test)]
 mod tests {
     use super::*;
-    use crate::additivity::gas::{GAS, MEASUREMENTS};
+    use crate::additivity::fitted::{FITTED, WORKSPACE};
 
     #[test]
     fn increment_is_that_of_the_n_alkanes() {
         // The Gold Book takes -62/3 = -20.67 kJ/mol; from hexane (-166.94, `atct-1.112`) to dodecane (-289.4, `crc2014`) it is -20.41, and
         // those values carry about 2 kJ/mol, 0.3 for each of the six steps.
         let increment: Features<512> = methylene_increment().unwrap();
-        let estimate = GAS.estimate(&increment, &mut [0.0; MEASUREMENTS]).unwrap();
+        let estimate = FITTED.estimate(&increment, &mut [0.0; WORKSPACE]).unwrap();
         assert!(
             (estimate.value_kj_per_mol + 20.6).abs() < 0.3,
             "{estimate:?}"

@@ -1,15 +1,17 @@
 //! The results of one structure as lines for people.
 
+use tautring_core::additivity::Grade;
 use tautring_core::quantities::KJ_PER_KCAL;
 use tautring_report::document::rounding::{fixed, rounded};
 use tautring_report::document::subscripted;
 use tautring_report::review::{
-    Agreement, Basis, Comparison, Quantity, SubstanceReview, TELLING_KJ_PER_MOL,
+    Agreement, Basis, Comparison, Evidence, FormationEnthalpy, Quantity, SubstanceReview,
+    TELLING_KJ_PER_MOL, phase_word,
 };
 
 /// What the signs mean; stands once under all cards.
 pub(super) const LEGEND: &str = "\
-±: expanded uncertainty U (95 %) for the true value, k·u with the k beside it. Gas phase, 298.15 K. Atoms count from 1.
+±: expanded uncertainty U (95 %) for the true value, k·u with the k beside it. Gas phase unless stated, 298.15 K; a crystal that melts below and\na liquid that boils below are hypothetical. Atoms count from 1.
 An estimate is no substitute for calorimetry, and a low strain is no proof of safety.";
 
 /// Measurements that are listed; the rest is counted.
@@ -34,20 +36,12 @@ pub(super) fn card(place: &str, review: &SubstanceReview) -> String {
             fixed(review.molar_mass_g_per_mol, 2)
         ),
     );
-    let gas = &review.gas;
-    let basis = match gas.basis {
-        Basis::Measured => "measured",
-        Basis::Estimated => "estimated",
-    };
-    line(
-        "enthalpy of formation",
-        format!("{}, {basis}", with_factor(gas.quantity)),
-    );
-    for comparison in &gas.comparisons {
-        line("  measured", compared(comparison));
-    }
-    if gas.basis == Basis::Measured {
-        line("  estimate", with_factor(gas.estimate));
+    for (phase, enthalpy) in [
+        ("enthalpy of formation", &review.gas),
+        ("  liquid", &review.liquid),
+        ("  crystal", &review.solid),
+    ] {
+        formation(phase, enthalpy, &mut line);
     }
     strain(review, &mut line);
     conventions(review, &mut line);
@@ -61,6 +55,28 @@ pub(super) fn card(place: &str, review: &SubstanceReview) -> String {
     }
     lines.push(String::new());
     lines.join("\n")
+}
+
+fn formation(phase: &str, enthalpy: &FormationEnthalpy, line: &mut impl FnMut(&str, String)) {
+    let basis = match (enthalpy.basis, enthalpy.carried_from) {
+        (Basis::Measured, _) => "measured".to_owned(),
+        (Basis::Estimated, None) => "estimated".to_owned(),
+        (Basis::Estimated, Some(from)) => format!("estimated from its measured {from}"),
+    };
+    let grade = match enthalpy.grade {
+        Grade::Measured => String::new(),
+        grade => format!(": {}", grade.name()),
+    };
+    line(
+        phase,
+        format!("{}, {basis}{grade}", with_factor(enthalpy.quantity)),
+    );
+    for comparison in &enthalpy.comparisons {
+        line("    measured", compared(comparison));
+    }
+    if enthalpy.basis == Basis::Measured {
+        line("    estimate", with_factor(enthalpy.estimate));
+    }
 }
 
 fn strain(review: &SubstanceReview, line: &mut impl FnMut(&str, String)) {
@@ -145,11 +161,14 @@ fn evidence(review: &SubstanceReview, line: &mut impl FnMut(&str, String)) {
         line(
             if index == 0 { "leans on (weight)" } else { "" },
             format!(
-                "{:>6}  {}  {}  [{}]",
+                "{:>6}  {}, {}  {}  [{}]  {}{}",
                 fixed(row.weight, 3),
                 row.molecule,
+                phase_word(&row.phase),
                 row.smiles,
-                row.source
+                row.source,
+                row.resemblance.words,
+                against(row)
             ),
         );
     }
@@ -162,6 +181,17 @@ fn evidence(review: &SubstanceReview, line: &mut impl FnMut(&str, String)) {
                 fixed(100.0 * review.gas.evidence_share, 0)
             ),
         );
+    }
+}
+
+/// A mark for a measurement that something speaks against; the flags say what.
+fn against(row: &Evidence) -> &'static str {
+    if row.misfit.is_some() {
+        "; MISFIT"
+    } else if row.doubts.is_empty() {
+        ""
+    } else {
+        "; DOUBTFUL"
     }
 }
 

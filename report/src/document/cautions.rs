@@ -1,13 +1,14 @@
 //! What a report is and what it is not.
 
 use super::block::{Block, Note, NoteKind};
+use super::evidence;
 use super::inline::Inline;
 use super::report::heading;
 
 pub(super) fn blocks() -> Vec<Block> {
     vec![
         heading(2, "What this report is, and what it is not"),
-        "For each substance this report gives the enthalpy of formation in the gas phase at 298.15 K, the strain energy of its rings, how sure each number is, and which measurements it rests on. Strain is energy that a ring opening can set free; it is one part of a hazard assessment.".into(),
+        "For each substance this report gives the enthalpies of formation of gas, liquid and crystal at 298.15 K, the strain energy of its rings, how sure each number is, and which measurements it rests on. Strain is energy that a ring opening can set free; it is one part of a hazard assessment.".into(),
         Block::Note(Note {
             kind: NoteKind::Warning,
             paragraphs: vec![
@@ -27,8 +28,8 @@ pub(super) fn blocks() -> Vec<Block> {
                 ("Catalysis and autocatalysis. ", "Acids, bases, metals, rust and the products themselves may open a ring far below its thermal limit."),
                 ("Confinement. ", "Pressure, gas release and heat loss depend on the vessel, not on the molecule."),
                 ("Functional groups. ", "Diazo, azide, nitro, peroxide and other groups known to decompose are not looked for; a molecule without strain can be an explosive."),
-                ("Configuration. ", "An estimate hardly tells cis from trans isomers; only a measured value belongs to the configuration that is stated."),
-                ("Impurities, solvents and mixtures. ", "Every number is for one pure molecule in the gas phase."),
+                ("Configuration. ", "An estimate tells cis from trans isomers only in part; a measured value belongs to the configuration that is stated."),
+                ("Impurities, solvents and mixtures. ", "Every number is for one pure substance, and the strain for its gas."),
             ]
             .map(|(what, why)| Inline::new().strong(what).text(why))
             .to_vec(),
@@ -38,13 +39,14 @@ pub(super) fn blocks() -> Vec<Block> {
             kind: NoteKind::Information,
             paragraphs: vec![
                 format!(
-                    "u is a standard uncertainty. U is an expanded uncertainty (95 %) of the true value, not of a new measurement, which has an error of its own. How far to trust it: when each molecule of the data is left out and predicted from the others, {} of the measured values lie inside the 95 % interval for a measurement, {} of those with a ring that is not aromatic, {} of those with a ring of three or four.",
+                    "u is a standard uncertainty, half the width of the 68 % interval. U is an expanded uncertainty (95 %) of the true value, not of a new measurement, which has an error of its own. How far to trust it: when each molecule of the data is left out and predicted from the others, {} of the measured values lie inside the 95 % interval for a measurement, {} of those with a ring that is not aromatic, {} of those with a ring of three or four.",
                     inside("all"),
                     inside("non-aromatic ring"),
                     inside("three- and four-membered rings"),
                 )
                 .into(),
-                "U = k·u. The coverage factor k differs from value to value, between 1.96 and 4.30: the part of u that comes from the measurements is normal, the part that comes from how far single molecules stray from additivity follows Student's distribution with two degrees of freedom, since some stray far; the 95 % quantiles of both are added in squares.".into(),
+                "U = k·u. The coverage factor k differs from value to value, between 1.96 and 3.26: the part of u that comes from the measurements is normal, the part that comes from how far single molecules stray from additivity follows Student's distribution with two degrees of freedom, since some stray far; the 95 % quantiles of both are added in squares.".into(),
+                evidence::grades_explained(),
                 "Numbers are rounded to their uncertainty: that to two significant digits, the value to the same digit. The calorie is the thermochemical one, 4.184 J. Atoms are numbered from 1 in the order of the structure as given.".into(),
             ],
         }),

@@ -1,6 +1,6 @@
 //! From a case to everything that its report is made from.
 
-use tautring_core::additivity::gas::GAS;
+use tautring_core::additivity::fitted::FITTED;
 
 use super::entry::Entry;
 use super::inputs::{Digest, Header, Inputs, RingReference};
@@ -11,15 +11,31 @@ use crate::structure::Structure;
 /// Sizes of the measured cycloalkanes that may stand behind the plot.
 const CYCLOALKANES: core::ops::RangeInclusive<usize> = 3..=15;
 
-/// What the numbers are made from, besides the case, as it was built into the program.
-const TABLES: [(&str, &[u8]); 4] = [
+/// What numbers and flags are made from, besides the case, as it was built into the program.
+const TABLES: [(&str, &[u8]); 8] = [
     (
-        "core/src/additivity/gas/tables.rs",
-        include_bytes!("../../../core/src/additivity/gas/tables.rs"),
+        "core/src/additivity/fitted/tables.rs",
+        include_bytes!("../../../core/src/additivity/fitted/tables.rs"),
     ),
     (
         "data/measurements.csv",
         include_bytes!("../../../data/measurements.csv"),
+    ),
+    (
+        "data/left_out.csv",
+        include_bytes!("../../../data/left_out.csv"),
+    ),
+    (
+        "data/misfits.csv",
+        include_bytes!("../../../data/misfits.csv"),
+    ),
+    (
+        "data/enthalpies_strained.csv",
+        include_bytes!("../../../data/enthalpies_strained.csv"),
+    ),
+    (
+        "data/contradictions.csv",
+        include_bytes!("../../../data/contradictions.csv"),
     ),
     (
         "data/check_values.csv",
@@ -108,8 +124,8 @@ fn digests(case: &Case, file: &str) -> Vec<Digest> {
     digests.extend(TABLES.map(|(name, bytes)| Digest::new(name, bytes)));
     // The factor is in the core already; its words are the bytes of the file.
     digests.push(Digest::new(
-        "core/src/additivity/gas/factor.bin",
-        GAS.factor.as_flattened(),
+        "core/src/additivity/fitted/factor.bin",
+        FITTED.covariance.factor.as_flattened(),
     ));
     digests
 }

@@ -2,15 +2,13 @@
 
 use super::bibliography::Citations;
 use super::block::{Block, Column, Note, NoteKind, Table};
+use super::condensed::basis;
+use super::evidence;
 use super::inline::Inline;
 use super::report::heading;
-use super::rounding::{fixed, rounded, uncertainty};
+use super::rounding::{rounded, uncertainty};
 use super::strain::coverage_factor;
-use super::summary::basis_word;
-use crate::review::{Agreement, Comparison, Evidence, FormationEnthalpy, TELLING_KJ_PER_MOL};
-
-/// Measurements that the table of evidence lists: beyond the first dozen each moves the estimate by a few per cent of its own error.
-const EVIDENCE_SHOWN: usize = 12;
+use crate::review::{Agreement, Comparison, FormationEnthalpy, TELLING_KJ_PER_MOL};
 
 pub(super) fn blocks(gas: &FormationEnthalpy, citations: &mut Citations) -> Vec<Block> {
     let mut blocks = vec![heading(4, "Enthalpy of formation, gas, 298.15 K")];
@@ -18,12 +16,15 @@ pub(super) fn blocks(gas: &FormationEnthalpy, citations: &mut Citations) -> Vec<
         blocks.push(Block::Note(Note {
             kind: NoteKind::Caution,
             paragraphs: vec![
-                "No measured value of this molecule was used: the number below is an estimate."
-                    .into(),
+                match gas.carried_from {
+                    Some(phase) => format!("No measured gas-phase value of this molecule was used: the number below is an estimate from its measured {phase} and an estimated step between the phases."),
+                    None => "No measured value of this molecule was used: the number below is an estimate.".to_owned(),
+                }
+                .into(),
             ],
         }));
     } else {
-        blocks.push(comparisons(&gas.comparisons, citations));
+        blocks.push(comparisons("gas", &gas.comparisons, citations));
         blocks.extend(
             gas.comparisons
                 .iter()
@@ -31,11 +32,16 @@ pub(super) fn blocks(gas: &FormationEnthalpy, citations: &mut Citations) -> Vec<
         );
     }
     blocks.push(values(gas));
-    blocks.push(evidence(gas, citations));
+    blocks.push(evidence::grade(gas));
+    blocks.push(evidence::table(gas, citations));
     blocks
 }
 
-fn comparisons(comparisons: &[Comparison], citations: &mut Citations) -> Block {
+pub(super) fn comparisons(
+    phase: &str,
+    comparisons: &[Comparison],
+    citations: &mut Citations,
+) -> Block {
     let rows = comparisons
         .iter()
         .map(|comparison| {
@@ -80,7 +86,7 @@ fn comparisons(comparisons: &[Comparison], citations: &mut Citations) -> Block {
         })
         .collect();
     Block::Table(Table {
-        caption: "Measured values of the molecule itself, beside the estimate that leaves every one of them out. They agree when the difference is within its U (95 %).".into(),
+        caption: format!("Measured values of the molecule itself ({phase}), beside the estimate that leaves out every measurement of it in any phase. They agree when the difference is within its U (95 %).").into(),
         columns: vec![
             Column::words("From"),
             Column::words("Source"),
@@ -169,7 +175,7 @@ fn values(gas: &FormationEnthalpy) -> Block {
         rows: vec![
             vec![
                 Inline::new().strong("Used"),
-                basis_word(gas.basis).into(),
+                basis(gas).into(),
                 Inline::new().strong(used.value),
                 used.uncertainty.into(),
                 uncertainty(gas.quantity.expanded_kj_per_mol).into(),
@@ -184,44 +190,5 @@ fn values(gas: &FormationEnthalpy) -> Block {
                 coverage_factor(gas.estimate).into(),
             ],
         ],
-    })
-}
-
-fn evidence(gas: &FormationEnthalpy, citations: &mut Citations) -> Block {
-    let rows = gas
-        .evidence
-        .iter()
-        .take(EVIDENCE_SHOWN)
-        .map(|evidence: &Evidence| {
-            let value = rounded(evidence.value_kj_per_mol, evidence.u_kj_per_mol);
-            vec![
-                Inline::from(evidence.molecule.as_str()),
-                Inline::new().code(evidence.smiles.as_str()),
-                fixed(evidence.weight, 3).into(),
-                value.value.into(),
-                value.uncertainty.into(),
-                Inline::new().with(citations.cite(&evidence.source)),
-            ]
-        })
-        .collect();
-    Block::Table(Table {
-        caption: format!(
-            "The measurements that the estimate leans on most. A weight says how far the estimate moves, in kJ/mol, when the measured value moves by 1 kJ/mol; it may be negative. {} carry {} % of the absolute weight; report.json lists them all.",
-            match gas.evidence.len().saturating_sub(EVIDENCE_SHOWN) {
-                0 => "Those listed".to_owned(),
-                more => format!("Those listed and {more} more"),
-            },
-            fixed(100.0 * gas.evidence_share, 0)
-        )
-        .into(),
-        columns: vec![
-            Column::words("Measured compound"),
-            Column::words("Structure"),
-            Column::numbers("Weight"),
-            Column::numbers("Enthalpy of formation, kJ/mol"),
-            Column::numbers("u, kJ/mol"),
-            Column::words("Source"),
-        ],
-        rows,
     })
 }

@@ -1,5 +1,6 @@
 //! The summary: every substance in one table, the plot, the flags.
 
+use tautring_core::additivity::Grade;
 use tautring_core::quantities::KJ_PER_KCAL;
 
 use super::block::{Block, Column, Figure, Note, NoteKind, Table};
@@ -52,13 +53,13 @@ fn table(inputs: &Inputs) -> Block {
                 )
                 .interval()
                 .into(),
-                basis_word(gas.basis).into(),
+                grade_word(gas.grade),
                 review.flags.len().to_string().into(),
             ]
         })
         .collect();
     Block::Table(Table {
-        caption: "Strain (the enthalpy of formation beside it, measured or estimated, minus the strain-free sum) and gas-phase enthalpy of formation at 298.15 K, each with its expanded uncertainty U (95 %, for the true value). \"No ring\" means none that counts as strained: aromatic rings do not.".into(),
+        caption: "Strain (the enthalpy of formation beside it, measured or estimated, minus the strain-free sum) and gas-phase enthalpy of formation at 298.15 K, each with its expanded uncertainty U (95 %, for the true value). The grades are explained above. \"No ring\" means none that counts as strained: aromatic rings do not.".into(),
         columns: vec![
             Column::words("Substance"),
             Column::words("Formula"),
@@ -66,7 +67,7 @@ fn table(inputs: &Inputs) -> Block {
             Column::numbers("Strain ± U, kcal/mol"),
             Column::numbers("Strain ± U, J/g"),
             Column::numbers("Enthalpy of formation ± U, kJ/mol"),
-            Column::words("Basis of the enthalpy"),
+            Column::words("Grade of the enthalpy"),
             Column::numbers("Flags (below)"),
         ],
         rows,
@@ -77,6 +78,14 @@ pub(super) const fn basis_word(basis: Basis) -> &'static str {
     match basis {
         Basis::Measured => "measured",
         Basis::Estimated => "estimated",
+    }
+}
+
+/// The grade, of weight where nobody should rely on the value.
+fn grade_word(grade: Grade) -> Inline {
+    match grade {
+        Grade::Outside => Inline::new().strong(grade.name()),
+        _ => grade.name().into(),
     }
 }
 

@@ -1,11 +1,20 @@
-//! The fit: from measured enthalpies of formation to the coefficient tables of the core.
+//! The fit: from measured enthalpies to the tables of the core.
 
+mod compact;
+mod design;
+mod hyperparameters;
 mod inference;
-mod matrices;
+mod matrix;
+mod misfits;
 mod tables;
 mod validation;
+mod worth;
 
-pub use inference::{Hyperparameters, Posterior, search};
-pub use matrices::LevelMatrices;
+pub use compact::COMPACT_MEASUREMENTS;
+pub use design::Design;
+pub use hyperparameters::Hyperparameters;
+pub use inference::{Posterior, search};
+pub use misfits::{LeftOutValue, MISFIT_DEVIATIONS, Misfit, misfits, misfits_csv};
 pub use tables::{TableError, Tables};
-pub use validation::{LeftOut, Summary, describe, leave_out, left_out_csv, summarise};
+pub use validation::{LeftOut, Summary, chance, describe, leave_out, left_out_csv, summarise};
+pub use worth::worth_of_levels;

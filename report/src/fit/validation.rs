@@ -2,11 +2,12 @@
 
 use std::fmt::Write as _;
 
-use tautring_core::additivity::{AdditivityError, Estimate, Level, cholesky};
+use tautring_core::additivity::{AdditivityError, Estimate, Level, Property, cholesky};
 use tautring_core::molecule::Element;
 
-use super::inference::{Posterior, entry};
-use crate::dataset::{Dataset, Row};
+use super::design::entry;
+use super::inference::Posterior;
+use crate::dataset::{Dataset, KnownMolecule};
 
 /// One measurement predicted from all measurements of other molecules.
 #[derive(Clone, Copy, Debug)]
@@ -33,7 +34,7 @@ impl LeftOut {
         } = self.new_measurement;
         let nu =
             tail_degrees_of_freedom * ((model_variance + tail_variance) / tail_variance).powi(2);
-        let scale = self.new_measurement.u_kj_per_mol();
+        let scale = (model_variance + tail_variance).sqrt();
         let z = self.error_kj_per_mol / scale;
         libm::lgamma(f64::midpoint(nu, 1.0))
             - libm::lgamma(nu / 2.0)
@@ -69,21 +70,28 @@ pub fn leave_out(data: &Dataset, posterior: &Posterior) -> Result<Vec<LeftOut>, 
             let mut unit = vec![0.0; set.len()];
             unit[at] = 1.0;
             let total = solve(unit)[at];
-            let measurement = &data.rows[row];
-            let model = total
-                - posterior.error_variance[row]
-                - posterior.deviation_variance[measurement.molecule];
+            let measured = &data.rows[row];
+            let deviations = posterior.deviation_variance[measured.molecule];
+            let deviation: f64 = measured
+                .property
+                .coefficients()
+                .iter()
+                .zip(deviations)
+                .map(|(c, d)| c * c * d)
+                .sum();
+            let model = total - posterior.error_variance[row] - deviation;
+            let features = data.molecule_of(measured).features.of(measured.property)?;
             let estimate = Estimate {
-                value_kj_per_mol: measurement.value_kj_per_mol - error,
+                value_kj_per_mol: measured.measurement.value_kj_per_mol - error,
                 model_variance: model.max(0.0),
-                tail_variance: prior.squared_scale(measurement.features.deviation()),
+                tail_variance: prior.squared_scale(features.deviation()),
                 tail_degrees_of_freedom: prior.degrees_of_freedom,
             };
             result.push(LeftOut {
                 row,
                 error_kj_per_mol: error,
                 estimate,
-                new_measurement: estimate.of_measurement(measurement.u_kj_per_mol),
+                new_measurement: estimate.of_measurement(measured.measurement.u_kj_per_mol),
             });
         }
     }
@@ -135,106 +143,146 @@ pub fn summarise<'a>(errors: impl IntoIterator<Item = &'a LeftOut>) -> Option<Su
     })
 }
 
-/// The families whose left-out errors are printed: name and whether a measurement belongs to it.
-type Family = (&'static str, fn(&Row) -> bool);
+/// The families whose left-out errors are printed: name and whether a molecule belongs to it.
+type Family = (&'static str, fn(&KnownMolecule) -> bool);
 
-const FAMILIES: [Family; 9] = [
+const FAMILIES: [Family; 10] = [
     ("all", |_| true),
-    ("hydrocarbons", |r| {
-        elements_only(r, &[Element::C, Element::H])
+    ("hydrocarbons", is_hydrocarbon),
+    ("acyclic hydrocarbons", |m| {
+        is_hydrocarbon(m) && m.structure.molecule.rings().is_empty()
     }),
-    ("acyclic hydrocarbons", |r| {
-        elements_only(r, &[Element::C, Element::H]) && r.structure.molecule.rings().is_empty()
-    }),
-    ("oxygen", |r| contains(r, Element::O)),
-    ("nitrogen", |r| contains(r, Element::N)),
-    ("sulfur", |r| contains(r, Element::S)),
-    ("halogens", |r| {
+    ("oxygen", |m| contains(m, Element::O)),
+    ("nitrogen", |m| contains(m, Element::N)),
+    ("sulfur", |m| contains(m, Element::S)),
+    ("halogens", |m| {
         [Element::F, Element::Cl, Element::Br, Element::I]
             .into_iter()
-            .any(|e| contains(r, e))
+            .any(|e| contains(m, e))
     }),
-    ("three- and four-membered rings", |r| {
-        r.structure
+    ("three- and four-membered rings", |m| {
+        m.structure
             .molecule
             .rings()
             .iter()
             .any(|ring| ring.len() < 5)
     }),
-    ("non-aromatic ring", |r| {
-        r.features
-            .terms()
-            .iter()
-            .any(|t| t.key.level() == Some(Level::RingSize))
-    }),
+    ("non-aromatic ring", |m| strained_rings(m) > 0.0),
+    ("polycycles", |m| strained_rings(m) > 1.0),
 ];
 
-fn contains(row: &Row, element: Element) -> bool {
-    row.structure
-        .molecule
-        .atoms()
-        .iter()
-        .any(|a| a.element == element)
+fn contains(known: &KnownMolecule, element: Element) -> bool {
+    let atoms = known.structure.molecule.atoms();
+    atoms.iter().any(|a| a.element == element)
 }
 
-fn elements_only(row: &Row, elements: &[Element]) -> bool {
-    row.structure
-        .molecule
-        .atoms()
+fn is_hydrocarbon(known: &KnownMolecule) -> bool {
+    let atoms = known.structure.molecule.atoms();
+    atoms
         .iter()
-        .all(|a| elements.contains(&a.element))
+        .all(|a| [Element::C, Element::H].contains(&a.element))
 }
 
-/// Prior uncertainty up to which an estimate counts as supported, kJ/mol.
+/// How many rings are not aromatic.
+fn strained_rings(known: &KnownMolecule) -> f64 {
+    let terms = known.features.terms().iter();
+    terms
+        .filter(|t| t.key.level() == Some(Level::RingSize))
+        .map(|t| t.count)
+        .sum()
+}
+
+/// Standard uncertainty up to which an estimate counts as supported, kJ/mol.
 const SUPPORTED_KJ_PER_MOL: f64 = 8.0;
 
-/// The table of left-out errors by family, as text.
+/// The table of left-out errors by property and family, as text.
 pub fn describe(data: &Dataset, errors: &[LeftOut]) -> String {
     let mut text = String::from(
-        "Left-out errors, kJ/mol (each constitution predicted from all others; coverage of the 95 % interval for a new measurement; score = mean logarithm of the predictive density)\n",
+        "Left-out errors, kJ/mol (each constitution predicted from all others; coverage of the 95 % interval for a new measurement, and the range in\nwhich it lies by chance in 99 of 100 cases; score = mean logarithm of the predictive density)\n",
     );
-    let _ = writeln!(
-        text,
-        "{:46}{:>6}{:>8}{:>8}{:>8}{:>10}{:>8}",
-        "family", "n", "median", "mean", "rms", "coverage", "score"
-    );
-    for supported in [false, true] {
-        for (name, belongs) in FAMILIES {
-            let chosen = errors.iter().filter(|e| {
-                belongs(&data.rows[e.row])
-                    && (!supported || e.estimate.u_kj_per_mol() <= SUPPORTED_KJ_PER_MOL)
-            });
-            if let Some(s) = summarise(chosen) {
-                let mark = if supported { ", u at most 8" } else { "" };
-                let _ = writeln!(
-                    text,
-                    "{:46}{:>6}{:>8.2}{:>8.2}{:>8.2}{:>9.1}%{:>8.3}",
-                    format!("{name}{mark}"),
-                    s.count,
-                    s.median_kj_per_mol,
-                    s.mean_kj_per_mol,
-                    s.root_mean_square_kj_per_mol,
-                    100.0 * s.coverage,
-                    s.score
-                );
+    for property in [Property::Gas, Property::Liquid, Property::Solid] {
+        let _ = writeln!(
+            text,
+            "\n{:46}{:>6}{:>8}{:>8}{:>8}{:>10}{:>16}{:>8}",
+            property.name(),
+            "n",
+            "median",
+            "mean",
+            "rms",
+            "coverage",
+            "by chance",
+            "score"
+        );
+        for supported in [false, true] {
+            for (name, belongs) in FAMILIES {
+                let chosen = errors.iter().filter(|e| {
+                    let row = &data.rows[e.row];
+                    row.property == property
+                        && belongs(data.molecule_of(row))
+                        && (!supported || e.estimate.u_kj_per_mol() <= SUPPORTED_KJ_PER_MOL)
+                });
+                if let Some(s) = summarise(chosen) {
+                    let mark = if supported { ", u at most 8" } else { "" };
+                    let (low, high) = chance(s.count);
+                    let _ = writeln!(
+                        text,
+                        "{:46}{:>6}{:>8.2}{:>8.2}{:>8.2}{:>9.1}%{:>16}{:>8.3}",
+                        format!("{name}{mark}"),
+                        s.count,
+                        s.median_kj_per_mol,
+                        s.mean_kj_per_mol,
+                        s.root_mean_square_kj_per_mol,
+                        100.0 * s.coverage,
+                        format!("{:.1}..{:.1}%", 100.0 * low, 100.0 * high),
+                        s.score
+                    );
+                }
             }
         }
     }
     text
 }
 
+/// Share that each interval ought to cover.
+const COVERAGE: f64 = 0.95;
+
+/// The shares between which `n` intervals of 95 % cover in at least 99 of 100 cases: the central region of the binomial distribution.
+pub fn chance(n: usize) -> (f64, f64) {
+    const OUTSIDE: f64 = 0.005;
+    let logarithm = |k: usize| {
+        let ln_factorial = |x: usize| libm::lgamma(x as f64 + 1.0);
+        ln_factorial(n) - ln_factorial(k) - ln_factorial(n - k)
+            + k as f64 * COVERAGE.ln()
+            + (n - k) as f64 * (1.0 - COVERAGE).ln()
+    };
+    let mut below = 0.0;
+    let low = (0..=n).find(|&k| {
+        below += logarithm(k).exp();
+        below > OUTSIDE
+    });
+    let mut above = 0.0;
+    let high = (0..=n).rev().find(|&k| {
+        above += logarithm(k).exp();
+        above > OUTSIDE
+    });
+    let share = |k: Option<usize>| k.unwrap_or(n) as f64 / n as f64;
+    (share(low), share(high))
+}
+
 /// The left-out errors as a table: one line for each measurement.
 pub fn left_out_csv(data: &Dataset, errors: &[LeftOut]) -> String {
     let mut text = String::from(
-        "name,smiles,source,measured_kj_per_mol,predicted_kj_per_mol,error_kj_per_mol,u_kj_per_mol,expanded_new_measurement_kj_per_mol\n",
+        "name,smiles,phase,source,measured_kj_per_mol,predicted_kj_per_mol,error_kj_per_mol,u_kj_per_mol,expanded_new_measurement_kj_per_mol\n",
     );
     for e in errors {
-        let m = &data.rows[e.row].measurement;
+        let row = &data.rows[e.row];
+        let m = &row.measurement;
         let _ = writeln!(
             text,
-            "\"{}\",{},{},{},{:.2},{:.2},{:.2},{:.2}",
+            "\"{}\",{},{},{},{},{:.2},{:.2},{:.2},{:.2}",
             m.name,
             m.smiles,
+            row.property.letter(),
             m.source,
             m.value_kj_per_mol,
             m.value_kj_per_mol - e.error_kj_per_mol,

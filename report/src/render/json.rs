@@ -4,7 +4,7 @@ use serde_json::{Value, json};
 
 use super::error::RenderError;
 use crate::document::Inputs;
-use crate::review::{ConventionStrain, SubstanceReview};
+use crate::review::{ConventionStrain, FormationEnthalpy, SubstanceReview};
 
 /// The results of one substance under the keys that other programs rely on, and more beside them.
 ///
@@ -13,7 +13,6 @@ use crate::review::{ConventionStrain, SubstanceReview};
 pub fn contract(review: &SubstanceReview) -> Value {
     let gas = &review.gas;
     let strain = &review.strain;
-    let not_computed = json!({ "value_kj_per_mol": null, "u_kj_per_mol": null, "basis": null });
     let rings: Vec<_> = review
         .rings
         .iter()
@@ -25,16 +24,9 @@ pub fn contract(review: &SubstanceReview) -> Value {
         "formula": review.formula,
         "molar_mass_g_per_mol": review.molar_mass_g_per_mol,
         "enthalpy_of_formation": {
-            "gas": {
-                "value_kj_per_mol": gas.quantity.value_kj_per_mol,
-                "u_kj_per_mol": gas.quantity.u_kj_per_mol,
-                "expanded_kj_per_mol": gas.quantity.expanded_kj_per_mol,
-                "basis": gas.basis,
-                "estimate": gas.estimate,
-                "comparisons": gas.comparisons,
-            },
-            "liquid": not_computed,
-            "solid": not_computed,
+            "gas": formation(gas),
+            "liquid": formation(&review.liquid),
+            "solid": formation(&review.solid),
         },
         "strain": strain,
         "strain_conventions": conventions,
@@ -57,6 +49,21 @@ pub fn contract(review: &SubstanceReview) -> Value {
         "evidence": gas.evidence,
         "evidence_share": gas.evidence_share,
         "flags": review.flags,
+    })
+}
+
+/// The enthalpy of formation in one phase.
+fn formation(enthalpy: &FormationEnthalpy) -> Value {
+    json!({
+        "value_kj_per_mol": enthalpy.quantity.value_kj_per_mol,
+        "u_kj_per_mol": enthalpy.quantity.u_kj_per_mol,
+        "expanded_kj_per_mol": enthalpy.quantity.expanded_kj_per_mol,
+        "basis": enthalpy.basis,
+        "carried_from": enthalpy.carried_from,
+        "grade": enthalpy.grade,
+        "support": enthalpy.support,
+        "estimate": enthalpy.estimate,
+        "comparisons": enthalpy.comparisons,
     })
 }
 
@@ -109,9 +116,9 @@ pub fn json(inputs: &Inputs) -> Result<String, RenderError> {
         "format_version": 1,
         "conventions": {
             "atom_indices": "from 0, in the order of the input",
-            "u": "standard uncertainty",
+            "u": "standard uncertainty: half the width of the 68.27 % interval",
             "expanded": "expanded uncertainty, 95 %, for the true value",
-            "coverage_factor": "expanded / u, of each value its own: Student's quantile at the effective degrees of freedom",
+            "coverage_factor": "expanded / u, of each value its own, from 1.96 (normal) to 3.26 (Student, two degrees of freedom)",
             "temperature_k": 298.15,
         },
         "versions": versions,

@@ -2,12 +2,14 @@
 
 use std::fs;
 
+use tautring_core::additivity::{Grade, Share, Support};
+
 use super::{contract, html, json, markdown, write_all};
 use crate::document::{Digest, Entry, Header, Inputs, Particulars, RingReference, Stated, report};
 use crate::review::{
     Agreement, Basis, CheckOutcome, CheckValue, Comparison, ConventionStrain, Evidence,
-    FormationEnthalpy, MeasuredEnthalpy, Participant, Quantity, RingStrain, Strain,
-    SubstanceReview,
+    FormationEnthalpy, MeasuredEnthalpy, Participant, Quantity, Resemblance, RingStrain, Sameness,
+    Strain, SubstanceReview,
 };
 use crate::structure::Structure;
 
@@ -63,6 +65,69 @@ fn convention(convention: &'static str, reaction: Option<&str>) -> ConventionStr
     }
 }
 
+const fn share(shared: f64, of: f64) -> Share {
+    Share { shared, of }
+}
+
+const fn support() -> Support {
+    Support {
+        composition: share(9.0, 9.0),
+        groups: share(3.0, 3.0),
+        groups_often: share(3.0, 3.0),
+        aromatic_rings: share(0.0, 0.0),
+        ring_sizes: share(1.0, 1.0),
+        ring_atoms: share(6.0, 6.0),
+        ring_environment: share(0.0, 0.0),
+        closest: 0.8,
+        expanded_kj_per_mol: 1.9,
+    }
+}
+
+fn formation(comparisons: Vec<Comparison>) -> FormationEnthalpy {
+    FormationEnthalpy {
+        quantity: quantity(53.52, 0.3),
+        carried_from: None,
+        basis: if comparisons.is_empty() {
+            Basis::Estimated
+        } else {
+            Basis::Measured
+        },
+        grade: if comparisons.is_empty() {
+            Grade::WellSupported
+        } else {
+            Grade::Measured
+        },
+        support: support(),
+        estimate: quantity(53.9, 0.7),
+        comparisons,
+        evidence: vec![Evidence {
+            molecule: "Methylcyclopropane <cis>".to_owned(),
+            smiles: "CC1CC1".to_owned(),
+            weight: -0.412,
+            share: 0.81,
+            phase: "g".to_owned(),
+            value_kj_per_mol: 24.3,
+            u_kj_per_mol: 0.9,
+            source: "crc2014".to_owned(),
+            resemblance: Resemblance {
+                sameness: Sameness::Another,
+                words: "same ring, 2 of 3 groups".to_owned(),
+                overall: 0.8,
+                groups: share(2.0, 3.0),
+                neighbours: share(3.0, 3.0),
+                aromatic_rings: share(0.0, 0.0),
+                ring_sizes: share(1.0, 1.0),
+                ring_atoms: share(6.0, 6.0),
+                ring_environment: share(0.0, 0.0),
+            },
+            left_out_error_kj_per_mol: Some(-2.34),
+            misfit: None,
+            doubts: vec!["two sources | differ".to_owned()],
+        }],
+        evidence_share: 0.81,
+    }
+}
+
 fn review(name: &str, smiles: &str, comparisons: Vec<Comparison>) -> SubstanceReview {
     let structure = Structure::from_smiles(smiles).unwrap();
     let rings: Vec<Vec<usize>> = structure
@@ -80,25 +145,9 @@ fn review(name: &str, smiles: &str, comparisons: Vec<Comparison>) -> SubstanceRe
         formula: "C3H6".to_owned(),
         molar_mass_g_per_mol: 42.081,
         oxygen_balance_percent: -342.2,
-        gas: FormationEnthalpy {
-            quantity: quantity(53.52, 0.3),
-            basis: if comparisons.is_empty() {
-                Basis::Estimated
-            } else {
-                Basis::Measured
-            },
-            estimate: quantity(53.9, 0.7),
-            comparisons,
-            evidence: vec![Evidence {
-                molecule: "Methylcyclopropane <cis>".to_owned(),
-                smiles: "CC1CC1".to_owned(),
-                weight: -0.412,
-                value_kj_per_mol: 24.3,
-                u_kj_per_mol: 0.9,
-                source: "crc2014".to_owned(),
-            }],
-            evidence_share: 0.81,
-        },
+        gas: formation(comparisons),
+        liquid: formation(Vec::new()),
+        solid: formation(Vec::new()),
         strain: Strain {
             quantity: quantity(115.6, 1.3),
             value_kcal_per_mol: 27.63,

@@ -1,5 +1,6 @@
 //! The strain of each ring system by several conventions, side by side.
 
+use tautring_core::additivity::{Property, Without};
 use tautring_core::reactions::{
     Difference, ReactionClass, ReactionError, carbon_free_enthalpy, methylene_increment,
     methylene_ring_size, species,
@@ -27,8 +28,8 @@ pub(super) struct Subject<'a> {
     pub(super) molecule: &'a HostMolecule,
     pub(super) gas: &'a FormationEnthalpy,
     pub(super) strain: &'a Strain,
-    /// Measurements that the estimates do without.
-    pub(super) left_out: &'a [usize],
+    /// The measurements that the estimates do without.
+    pub(super) without: &'a Without<'a>,
 }
 
 impl Subject<'_> {
@@ -97,8 +98,8 @@ impl Reviewer {
                 "{} -> {size} CH2 of n-alkanes",
                 line_notation(subject.molecule)
             )),
-            quantity: Some(self.quantity_of_difference(&used, subject.left_out)?),
-            estimate: Some(self.quantity_of_difference(&estimated, subject.left_out)?),
+            quantity: Some(self.quantity_of_difference(&used, subject.without)?),
+            estimate: Some(self.quantity_of_difference(&estimated, subject.without)?),
             basis: Some(subject.gas.basis),
             participants: Vec::new(),
             note: "CH2: the estimated step from dodecane to tridecane".to_owned(),
@@ -168,8 +169,8 @@ impl Reviewer {
                 row.participants.len()
             ),
         };
-        row.quantity = Some(self.quantity_of_difference(&used, subject.left_out)?);
-        row.estimate = Some(self.quantity_of_difference(&estimated, subject.left_out)?);
+        row.quantity = Some(self.quantity_of_difference(&used, subject.without)?);
+        row.estimate = Some(self.quantity_of_difference(&estimated, subject.without)?);
         Ok(row)
     }
 
@@ -236,24 +237,25 @@ impl Reviewer {
         }
         let rows = self.by_identity.get(&diastereomer(molecule).ok()?)?;
         let rows = rows.iter().filter_map(|&row| self.data().rows.get(row));
+        let gas = rows.filter(|row| row.property == Property::Gas);
+        let rows = gas.map(|row| &row.measurement);
         let row = rows.min_by(|a, b| a.u_kj_per_mol.total_cmp(&b.u_kj_per_mol))?;
         Some((
             measured(row.value_kj_per_mol, row.u_kj_per_mol),
-            row.measurement.source.clone(),
-            Some(row.measurement.name.clone()),
+            row.source.clone(),
+            Some(row.name.clone()),
         ))
     }
 
     fn quantity_of_difference(
         &self,
         difference: &HostDifference,
-        left_out: &[usize],
+        without: &Without<'_>,
     ) -> Result<Quantity, ReviewError> {
         let features: &HostFeatures = difference.features();
-        let mut workspace = self.workspace(left_out.len());
         let estimate = self
             .model
-            .estimate_without(features, left_out, &mut workspace)?;
+            .estimate_without(features, without, &mut self.workspace())?;
         Ok(quantity_of(&difference.with_published(estimate)))
     }
 }

@@ -1,6 +1,9 @@
 //! What a review finds for one substance. Units are in the names; `u` is a standard uncertainty.
 
 use serde::Serialize;
+use tautring_core::additivity::{Grade, Share, Support};
+
+use crate::fit::Misfit;
 
 /// A value with its uncertainty, kJ/mol.
 #[derive(Clone, Copy, Debug, PartialEq, Serialize)]
@@ -71,7 +74,7 @@ pub struct Comparison {
     pub keeps_estimate: bool,
 }
 
-/// The enthalpy of formation in the gas phase at 298.15 K.
+/// The enthalpy of formation in one phase at 298.15 K.
 #[derive(Clone, Debug, Serialize)]
 pub struct FormationEnthalpy {
     /// The value that the report uses.
@@ -79,6 +82,12 @@ pub struct FormationEnthalpy {
     pub quantity: Quantity,
     /// What it rests on.
     pub basis: Basis,
+    /// Where the molecule was measured in other phases only: in which, so that the estimate has only the step between the phases to find.
+    pub carried_from: Option<&'static str>,
+    /// How far to trust it.
+    pub grade: Grade,
+    /// What the grade was made from.
+    pub support: Support,
     /// The estimate of the additivity; it leans on the molecule's own measurements where there are any and nobody asked to leave them out.
     pub estimate: Quantity,
     /// The molecule's own measurements beside the estimate made without them.
@@ -87,6 +96,13 @@ pub struct FormationEnthalpy {
     pub evidence: Vec<Evidence>,
     /// Share of the absolute weight that `evidence` carries.
     pub evidence_share: f64,
+}
+
+impl FormationEnthalpy {
+    /// Whether the molecule was measured, but the estimate made without these measurements is used.
+    pub fn is_set_aside(&self) -> bool {
+        !self.comparisons.is_empty() && self.basis == Basis::Estimated
+    }
 }
 
 /// A measurement that an estimate leans on.
@@ -98,12 +114,71 @@ pub struct Evidence {
     pub smiles: String,
     /// Its weight in the estimate: kJ/mol of estimate for one kJ/mol of measured value.
     pub weight: f64,
+    /// The share of all absolute weight that it carries.
+    pub share: f64,
+    /// Phase of the enthalpy of formation, `g`, `l` or `s`; `v` for a vaporisation, `b` for a sublimation.
+    pub phase: String,
     /// The measured value, kJ/mol.
     pub value_kj_per_mol: f64,
     /// Its standard uncertainty, kJ/mol.
     pub u_kj_per_mol: f64,
     /// Bibliography key.
     pub source: String,
+    /// How the compound is like the molecule.
+    pub resemblance: Resemblance,
+    /// Measured minus predicted when the compound itself is left out, kJ/mol.
+    pub left_out_error_kj_per_mol: Option<f64>,
+    /// What its family says of it, if the value is a misfit.
+    pub misfit: Option<Misfit>,
+    /// What the collection of the data has noted against the value.
+    pub doubts: Vec<String>,
+}
+
+/// The phase of an enthalpy of formation, or the step between phases, in a word.
+pub fn phase_word(phase: &str) -> &str {
+    match phase {
+        "g" => "gas",
+        "l" => "liquid",
+        "s" => "solid",
+        "v" => "vaporisation",
+        "b" => "sublimation",
+        other => other,
+    }
+}
+
+/// Whether a measured compound is the molecule that is estimated.
+#[derive(Clone, Copy, Debug, PartialEq, Eq, Serialize)]
+#[serde(rename_all = "snake_case")]
+pub enum Sameness {
+    /// The molecule itself or its mirror image.
+    Itself,
+    /// The same constitution, the configuration another or not stated.
+    Constitution,
+    /// Another molecule.
+    Another,
+}
+
+/// How a measured compound is like the molecule that is estimated: which of the molecule's features it has.
+#[derive(Clone, Debug, Serialize)]
+pub struct Resemblance {
+    /// Whether it is the molecule.
+    pub sameness: Sameness,
+    /// In a few words.
+    pub words: String,
+    /// As one number, from 0 to 1.
+    pub overall: f64,
+    /// Groups.
+    pub groups: Share,
+    /// Pairs of atoms two and three bonds apart.
+    pub neighbours: Share,
+    /// Aromatic rings with their patterns of substitution.
+    pub aromatic_rings: Share,
+    /// Sizes of the other rings.
+    pub ring_sizes: Share,
+    /// Atoms and bonds of the other rings.
+    pub ring_atoms: Share,
+    /// What several rings share, and configurations in rings.
+    pub ring_environment: Share,
 }
 
 /// The strain of one ring system.
@@ -196,6 +271,10 @@ pub struct SubstanceReview {
     pub oxygen_balance_percent: f64,
     /// Gas-phase enthalpy of formation.
     pub gas: FormationEnthalpy,
+    /// Enthalpy of formation of the liquid; below the melting point of a supercooled one.
+    pub liquid: FormationEnthalpy,
+    /// Enthalpy of formation of the crystal.
+    pub solid: FormationEnthalpy,
     /// Strain.
     pub strain: Strain,
     /// The strain of each ring system by several conventions.

@@ -1,6 +1,6 @@
 //! Measured values beside the estimate made without them, and which of the two the review uses.
 
-use tautring_core::additivity::Estimate;
+use tautring_core::additivity::{Estimate, Property};
 
 use super::findings::{Agreement, Basis, Comparison, MeasuredEnthalpy, Quantity};
 use super::reviewer::quantity_of;
@@ -12,9 +12,11 @@ const COVERAGE_FACTOR: f64 = 1.96;
 /// Standard uncertainty that a measured value of a case file gets when it states none, kJ/mol: that of the handbook.
 pub const UNSTATED_KJ_PER_MOL: f64 = 2.0;
 
-/// A gas-phase enthalpy of formation that a case file states.
+/// An enthalpy of formation that a case file states.
 #[derive(Clone, Debug)]
 pub struct CaseMeasurement {
+    /// Of which phase.
+    pub property: Property,
     /// The value, kJ/mol.
     pub value_kj_per_mol: f64,
     /// Standard uncertainty, kJ/mol, if stated.
@@ -43,7 +45,7 @@ const SAME_KJ_PER_MOL: f64 = 0.15;
 pub(super) fn compare(
     data: &Dataset,
     published: &[usize],
-    case: &[CaseMeasurement],
+    case: &[&CaseMeasurement],
     without: &Estimate,
 ) -> Vec<Comparison> {
     let stated = case.iter().map(|m| {
@@ -62,14 +64,19 @@ pub(super) fn compare(
             .any(|m| (m.value_kj_per_mol - value).abs() <= SAME_KJ_PER_MOL)
     };
     let rows = published.iter().map(|&index| &data.rows[index]);
-    let known = rows.filter(|row| !quoted(row.value_kj_per_mol)).map(|row| {
-        let measured = MeasuredEnthalpy {
-            quantity: measured(row.value_kj_per_mol, row.u_kj_per_mol),
-            source: row.measurement.source.clone(),
-            from_case: false,
-        };
-        comparison(measured, None, without)
-    });
+    let known = rows
+        .filter(|row| !quoted(row.measurement.value_kj_per_mol))
+        .map(|row| {
+            let measured = MeasuredEnthalpy {
+                quantity: measured(
+                    row.measurement.value_kj_per_mol,
+                    row.measurement.u_kj_per_mol,
+                ),
+                source: row.measurement.source.clone(),
+                from_case: false,
+            };
+            comparison(measured, None, without)
+        });
     stated.chain(known).collect()
 }
 

@@ -4,7 +4,10 @@
 
 mod check_values;
 mod conventions;
+mod doubts;
+mod evidence;
 mod findings;
+mod known;
 mod measured;
 mod reviewer;
 mod stated;
@@ -13,8 +16,9 @@ mod warnings;
 pub use check_values::{CheckValueError, check_values};
 pub use findings::{
     Agreement, Basis, CheckOutcome, CheckValue, Comparison, ConventionStrain, Evidence,
-    FormationEnthalpy, MeasuredEnthalpy, Participant, Quantity, RingStrain, Strain,
-    SubstanceReview, TELLING_KJ_PER_MOL,
+    FormationEnthalpy, MeasuredEnthalpy, Participant, Quantity, Resemblance, RingStrain, Sameness,
+    Strain, SubstanceReview, TELLING_KJ_PER_MOL, phase_word,
 };
 pub use measured::{CaseMeasurement, Settled, UNSTATED_KJ_PER_MOL};
 pub use reviewer::{ReviewError, Reviewer};
+pub use warnings::LEANING_WEIGHT;

@@ -3,9 +3,10 @@
 use std::collections::BTreeMap;
 use std::fmt;
 
-use tautring_core::additivity::gas::GAS;
+use tautring_core::additivity::fitted::FITTED;
 use tautring_core::additivity::{
-    AdditivityError, Estimate, MAX_LEFT_OUT, Model, count, count_strain,
+    AdditivityError, Estimate, Grade, MeasuredMolecule, Model, Property, Without, count,
+    count_strain,
 };
 use tautring_core::oxygen_balance::oxygen_balance_percent;
 use tautring_core::quantities::KJ_PER_KCAL;
@@ -13,20 +14,18 @@ use tautring_core::reactions::ReactionError;
 use tautring_core::strain;
 
 use super::conventions::Subject;
-use super::findings::{
-    Basis, Evidence, FormationEnthalpy, Quantity, RingStrain, Strain, SubstanceReview,
-};
+use super::doubts::Doubts;
+use super::evidence::Estimated;
+use super::findings::{Basis, FormationEnthalpy, Quantity, RingStrain, Strain, SubstanceReview};
+use super::known::Known;
 use super::measured::{CaseMeasurement, choose, compare};
-use super::warnings;
+use super::warnings::{self, Warned};
 use crate::dataset::{Dataset, DatasetError, HostFeatures};
 use crate::structure::{HostMolecule, Structure, diastereomer, skeleton};
 
 /// Name of the convention of strain, as reports and JSON give it.
 const CONVENTION: &str =
     "group increments: enthalpy of formation minus the strain-free sum, gas, 298.15 K";
-
-/// Share of the absolute weight that the listed evidence carries together.
-const EVIDENCE_SHARE: f64 = 0.8;
 
 /// The strain of a molecule without rings that count as strained: nothing, by definition.
 const NOTHING: Quantity = Quantity {
@@ -88,7 +87,9 @@ pub struct Reviewer {
     pub(super) model: &'static Model<'static>,
     data: Dataset,
     pub(super) by_identity: BTreeMap<String, Vec<usize>>,
-    by_skeleton: BTreeMap<String, Vec<usize>>,
+    pub(super) by_skeleton: BTreeMap<String, Vec<usize>>,
+    pub(super) known: Known,
+    pub(super) doubts: Doubts,
 }
 
 impl Reviewer {
@@ -97,27 +98,24 @@ impl Reviewer {
     /// # Errors
     /// [`ReviewError::Data`] when they were not.
     pub fn new() -> Result<Self, ReviewError> {
-        let data = Dataset::read(MEASUREMENTS, "g")?;
-        let values = data.rows.iter().map(|row| row.value_kj_per_mol);
-        if !values.eq(GAS.values.iter().copied()) {
+        let data = Dataset::read(MEASUREMENTS)?;
+        let values = data.rows.iter().map(|r| r.measurement.value_kj_per_mol);
+        if !values.eq(FITTED.values.iter().copied()) {
             return Err(ReviewError::Data(
                 "data/measurements.csv is not what the tables were made from".to_owned(),
             ));
         }
         let mut by_identity: BTreeMap<String, Vec<usize>> = BTreeMap::new();
         let mut by_skeleton: BTreeMap<String, Vec<usize>> = BTreeMap::new();
-        for (index, row) in data.rows.iter().enumerate() {
-            by_identity
-                .entry(row.identity.clone())
-                .or_default()
-                .push(index);
-            by_skeleton
-                .entry(row.skeleton.clone())
-                .or_default()
-                .push(index);
+        for known in &data.molecules {
+            by_identity.insert(known.identity.clone(), known.rows.clone());
+            let of_skeleton = by_skeleton.entry(known.skeleton.clone()).or_default();
+            of_skeleton.extend(&known.rows);
         }
         Ok(Self {
-            model: &GAS,
+            model: &FITTED,
+            known: Known::of(&data),
+            doubts: Doubts::new()?,
             data,
             by_identity,
             by_skeleton,
@@ -149,52 +147,56 @@ impl Reviewer {
         let plain = skeleton(molecule).map_err(AdditivityError::from)?;
         let none = Vec::new();
         let own = self.by_skeleton.get(&plain).unwrap_or(&none);
-        let same = diastereomer(molecule).map_err(AdditivityError::from)?;
-        let same = self.by_identity.get(&same).unwrap_or(&none);
+        let identity = diastereomer(molecule).map_err(AdditivityError::from)?;
+        let same = self.by_identity.get(&identity).unwrap_or(&none);
 
-        let left_out: &[usize] = if blind { own } else { &[] };
-        let mut weights = self.workspace(own.len());
-        let without = self.model.estimate_without(&features, own, &mut weights)?;
-        let estimate = self
-            .model
-            .estimate_without(&features, left_out, &mut weights)?;
-        let (evidence, evidence_share) = self.evidence(&weights);
-
-        let published: &[usize] = if blind { &[] } else { same };
-        let case = if blind { &[] } else { case };
-        let comparisons = compare(&self.data, published, case, &without);
-        let chosen = choose(&comparisons, &without);
-        let (quantity, basis) = chosen.unwrap_or((quantity_of(&estimate), Basis::Estimated));
+        let [mut own_columns, mut no_columns] =
+            [own.len(), 0].map(|m| vec![0.0; m * self.model.len()]);
+        let without_own = Without::new(self.model, own, &mut own_columns)?;
+        let with_all = Without::new(self.model, &[], &mut no_columns)?;
+        let knowledge = Knowledge {
+            without_own: &without_own,
+            without: if blind { &without_own } else { &with_all },
+            same: if blind { &[] } else { same },
+            case: if blind { &[] } else { case },
+        };
+        let estimated = Estimated {
+            features: &features,
+            identity: &identity,
+            skeleton: &plain,
+        };
+        let gas = self.formation(Property::Gas, &estimated, &knowledge)?;
+        let liquid = self.formation(Property::Liquid, &estimated, &knowledge)?;
+        let solid = self.formation(Property::Solid, &estimated, &knowledge)?;
         // The strain belongs to the enthalpy in use: without the measurements where these were set aside.
-        let left_out = if chosen.is_some() && basis == Basis::Estimated {
-            own
+        let without = if gas.is_set_aside() {
+            &without_own
         } else {
-            left_out
+            knowledge.without
         };
-
-        let strain = self.strain(molecule, &features, molar_mass, left_out, basis, quantity)?;
-        let gas = FormationEnthalpy {
-            quantity,
-            basis,
-            estimate: quantity_of(&estimate),
-            comparisons,
-            evidence,
-            evidence_share,
-        };
+        let strain = self.strain(molecule, &features, molar_mass, without, &gas)?;
         let strain_conventions = self.conventions(&Subject {
             molecule,
             gas: &gas,
             strain: &strain,
-            left_out,
+            without,
         })?;
-        let flags = warnings::of(
-            self.model,
+        let own_rows = knowledge.same.iter();
+        let own_rows = own_rows.map(|&row| &self.data.rows[row].measurement);
+        let doubts = if blind {
+            Vec::new()
+        } else {
+            let phases = own_rows.clone().map(|m| m.phase.as_str());
+            self.doubts
+                .curated_in(&identity, std::iter::once("g").chain(phases))
+        };
+        let flags = warnings::of(&Warned {
             structure,
-            &features,
-            &estimate,
-            &gas.comparisons,
-            own.len() > same.len() && same.is_empty(),
-        );
+            gas: &gas,
+            misfits: own_rows.filter_map(|m| self.doubts.misfit(m)).collect(),
+            doubts,
+            other_configuration_measured: own.len() > same.len() && same.is_empty(),
+        });
         Ok(SubstanceReview {
             name: name.to_owned(),
             input: structure.input.clone(),
@@ -202,6 +204,8 @@ impl Reviewer {
             molar_mass_g_per_mol: molar_mass,
             oxygen_balance_percent: oxygen_balance_percent(&formula),
             gas,
+            liquid,
+            solid,
             strain,
             strain_conventions,
             rings: molecule
@@ -224,7 +228,58 @@ impl Reviewer {
             let features: HostFeatures = count(&structure.molecule)?;
             total.add_scaled(&features, *number)?;
         }
-        Ok(self.model.estimate(&total, &mut self.workspace(0))?)
+        Ok(self.model.estimate(&total, &mut self.workspace())?)
+    }
+
+    /// The enthalpy of formation in one phase.
+    fn formation(
+        &self,
+        property: Property,
+        estimated: &Estimated<'_>,
+        knowledge: &Knowledge<'_>,
+    ) -> Result<FormationEnthalpy, ReviewError> {
+        let features = estimated.features.of(property)?;
+        let without_own = knowledge.without_own;
+        let blind = self
+            .model
+            .estimate_without(&features, without_own, &mut self.workspace())?;
+        let of_property = |row: &&usize| self.data.rows[**row].property == property;
+        let published: Vec<usize> = knowledge.same.iter().filter(of_property).copied().collect();
+        let case = knowledge.case.iter().filter(|m| m.property == property);
+        let case: Vec<&CaseMeasurement> = case.collect();
+        let comparisons = compare(&self.data, &published, &case, &blind);
+        let chosen = choose(&comparisons, &blind);
+        // Estimate and evidence belong to the enthalpy in use: without the measurements where these were set aside.
+        let set_aside = matches!(chosen, Some((_, Basis::Estimated)));
+        let own = knowledge.same.first().filter(|_| !set_aside);
+        let own = own.map(|&row| &self.data.rows[row]);
+        let about = own.map(|row| MeasuredMolecule {
+            molecule: row.molecule,
+            property,
+        });
+        let without = if set_aside {
+            without_own
+        } else {
+            knowledge.without
+        };
+        let (estimate, leaning) = self.lean(estimated, &features, about, without)?;
+        let (quantity, basis) = chosen.unwrap_or((quantity_of(&estimate), Basis::Estimated));
+        Ok(FormationEnthalpy {
+            quantity,
+            basis,
+            carried_from: own
+                .filter(|_| comparisons.is_empty())
+                .map(|row| row.property.name()),
+            grade: match basis {
+                Basis::Measured => Grade::Measured,
+                Basis::Estimated => Grade::of(&leaning.support),
+            },
+            support: leaning.support,
+            estimate: quantity_of(&estimate),
+            comparisons,
+            evidence: leaning.evidence,
+            evidence_share: leaning.share,
+        })
     }
 
     fn strain(
@@ -232,14 +287,13 @@ impl Reviewer {
         molecule: &HostMolecule,
         features: &HostFeatures,
         molar_mass: f64,
-        left_out: &[usize],
-        basis: Basis,
-        enthalpy: Quantity,
+        without: &Without<'_>,
+        gas: &FormationEnthalpy,
     ) -> Result<Strain, ReviewError> {
-        let mut workspace = self.workspace(left_out.len());
+        let mut workspace = self.workspace();
         let mut estimate = |features: &HostFeatures| {
             self.model
-                .estimate_without(features, left_out, &mut workspace)
+                .estimate_without(features, without, &mut workspace)
         };
         let systems = molecule.ring_systems();
         let mut ring_systems = Vec::new();
@@ -269,7 +323,9 @@ impl Reviewer {
         } else {
             quantity_of(&estimate(&strain::ring_part(features))?)
         };
-        let total = if basis == Basis::Measured && !ring_systems.is_empty() {
+        let of_own = gas.basis == Basis::Measured || gas.carried_from.is_some();
+        let enthalpy = gas.quantity;
+        let total = if of_own && !ring_systems.is_empty() {
             let free = quantity_of(&estimate(&strain::strain_free_part(features))?);
             Quantity {
                 value_kj_per_mol: enthalpy.value_kj_per_mol - free.value_kj_per_mol,
@@ -291,41 +347,21 @@ impl Reviewer {
         })
     }
 
-    /// The measurements with the largest absolute weights, and the share of all that they carry.
-    fn evidence(&self, weights: &[f64]) -> (Vec<Evidence>, f64) {
-        let weights = &weights[..self.data.rows.len()];
-        let total: f64 = weights.iter().map(|w| w.abs()).sum();
-        let mut order: Vec<usize> = (0..weights.len()).collect();
-        order.sort_by(|&a, &b| {
-            weights[b]
-                .abs()
-                .total_cmp(&weights[a].abs())
-                .then(a.cmp(&b))
-        });
-        let mut listed = Vec::new();
-        let mut carried = 0.0;
-        for index in order {
-            if carried >= EVIDENCE_SHARE * total || weights[index] == 0.0 {
-                break;
-            }
-            carried += weights[index].abs();
-            let row = &self.data.rows[index];
-            listed.push(Evidence {
-                molecule: row.measurement.name.clone(),
-                smiles: row.measurement.smiles.clone(),
-                weight: weights[index],
-                value_kj_per_mol: row.value_kj_per_mol,
-                u_kj_per_mol: row.u_kj_per_mol,
-                source: row.measurement.source.clone(),
-            });
-        }
-        let share = if total > 0.0 { carried / total } else { 0.0 };
-        (listed, share)
+    pub(super) fn workspace(&self) -> Vec<f64> {
+        vec![0.0; self.model.workspace_len()]
     }
+}
 
-    pub(super) fn workspace(&self, left_out: usize) -> Vec<f64> {
-        vec![0.0; self.model.len() * (left_out.min(MAX_LEFT_OUT) + 1)]
-    }
+/// What may be used for the estimates of one molecule.
+struct Knowledge<'a> {
+    /// All measurements but those of the constitution.
+    without_own: &'a Without<'a>,
+    /// The measurements that the estimates may lean on.
+    without: &'a Without<'a>,
+    /// The measurements of the molecule itself that may be used.
+    same: &'a [usize],
+    /// What the case file states of it.
+    case: &'a [CaseMeasurement],
 }
 
 /// An estimate's value with its uncertainty.

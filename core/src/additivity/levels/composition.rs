@@ -12,27 +12,32 @@ pub(super) fn count<const A: usize, const B: usize, const F: usize>(
     skeleton: &Skeleton<A, B>,
     features: &mut Features<F>,
 ) -> Result<(), AdditivityError> {
-    for (_, site) in skeleton.sites() {
+    for (atom, site) in skeleton.sites() {
         let hydrogens = u64::from(site.hydrogens);
-        features.add(Key::new(Level::Element, &[site.kind.element_token()]), 1.0)?;
+        let element = site.kind.element_token();
+        let alone = skeleton.heteroatoms_among(&[atom]);
+        features.add(Key::new(Level::Element, alone, &[element]), 1.0)?;
+        let named = skeleton.heteroatoms(&[atom]);
+        let tokens = [site.kind.token(), hydrogens];
+        features.add(Key::new(Level::Atom, named, &tokens), 1.0)?;
         if hydrogens > 0 {
-            let hydrogen = Key::new(Level::Element, &[Element::H as u64]);
+            let hydrogen = Key::new(Level::Element, 0, &[Element::H as u64]);
             features.add(hydrogen, f64::from(site.hydrogens))?;
-        }
-        features.add(Key::new(Level::Atom, &[site.kind.token(), hydrogens]), 1.0)?;
-        if hydrogens > 0 {
-            let bond = Key::new(Level::Bond, &[site.kind.token()]);
+            let bond = Key::new(Level::Bond, named, &[site.kind.token()]);
             features.add(bond, f64::from(site.hydrogens))?;
         }
     }
-    for (bond, _, [a, b]) in skeleton.bonds() {
+    for (bond, ends, [a, b]) in skeleton.bonds() {
         let order = skeleton.order_token(bond);
+        let among = skeleton.heteroatoms_among(&ends);
         let [low, high] = sorted(a.kind.token(), b.kind.token());
-        features.add(Key::new(Level::Bond, &[low, high, order]), 1.0)?;
+        let named = skeleton.heteroatoms(&ends);
+        features.add(Key::new(Level::Bond, named, &[low, high, order]), 1.0)?;
         let [low, high] = sorted(a.kind.element_token(), b.kind.element_token());
-        features.add(Key::new(Level::BondOrder, &[low, high, order]), 1.0)?;
+        features.add(Key::new(Level::BondOrder, among, &[low, high, order]), 1.0)?;
         let [low, high] = sorted(a.kind.class_token(), b.kind.class_token());
-        features.add(Key::new(Level::BondElements, &[low, high, order]), 1.0)?;
+        let tokens = [low, high, order];
+        features.add(Key::new(Level::BondElements, among, &tokens), 1.0)?;
     }
     Ok(())
 }

@@ -21,7 +21,9 @@ pub(super) fn cis<const A: usize, const B: usize, const F: usize>(
             if same_side(stereo, n.atom, m.atom) {
                 let tokens = [first, second].map(|s| s.kind.token() << 3 | u64::from(s.degree));
                 let [low, high] = sorted(tokens[0], tokens[1]);
-                features.add(Key::new(Level::Cis, &[low, high]), 1.0)?;
+                let ends = [n.atom, m.atom].map(usize::from);
+                let named = skeleton.heteroatoms(&ends);
+                features.add(Key::new(Level::Cis, named, &[low, high]), 1.0)?;
             }
         }
     }
@@ -45,7 +47,7 @@ pub(super) fn ring<const A: usize, const B: usize, const F: usize>(
         let trans = pairs(skeleton, ends)
             .any(|[(n, _), (m, _)]| in_ring(n) && in_ring(m) && !same_side(stereo, n.atom, m.atom));
         if trans {
-            features.add(Key::new(Level::RingConfiguration, &[size as u64]), 1.0)?;
+            features.add(Key::new(Level::RingConfiguration, 0, &[size as u64]), 1.0)?;
         }
     }
     Ok(())

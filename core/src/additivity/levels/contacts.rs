@@ -25,7 +25,8 @@ pub(super) fn count<const A: usize, const B: usize, const F: usize>(
                             && skeleton.is_ring_bond(usize::from(m.bond)),
                     );
                     let tokens = [low, high, in_ring, site.kind.token()];
-                    features.add(Key::new(Level::OneFive, &tokens), 1.0)?;
+                    let named = skeleton.heteroatoms(&[middle]);
+                    features.add(Key::new(Level::OneFive, named, &tokens), 1.0)?;
                 }
             }
         }

@@ -1,6 +1,8 @@
 //! Counting a molecule on every level, and on the ring levels alone.
 
-use super::{aromatic, composition, configuration, contacts, groups, paths, rings};
+use super::{
+    aromatic, composition, configuration, contacts, groups, paths, resonance, ring_sides, rings,
+};
 use crate::additivity::deviation;
 use crate::additivity::error::AdditivityError;
 use crate::additivity::features::Features;
@@ -29,6 +31,7 @@ pub fn count<const A: usize, const B: usize, const F: usize>(
     paths::vicinal(&skeleton, &mut features)?;
     contacts::count(&skeleton, &mut features)?;
     aromatic::count(&skeleton, &mut features)?;
+    resonance::count(&skeleton, &mut features)?;
     configuration::cis(&skeleton, &mut features)?;
     strain_levels(&skeleton, &mut features, &|_| true)?;
     Ok(features)
@@ -80,5 +83,6 @@ fn strain_levels<const A: usize, const B: usize, const F: usize>(
 ) -> Result<(), AdditivityError> {
     rings::count(skeleton, features, keep)?;
     paths::ring_vicinal(skeleton, features, keep)?;
-    configuration::ring(skeleton, features, keep)
+    configuration::ring(skeleton, features, keep)?;
+    ring_sides::count(skeleton, features, keep)
 }

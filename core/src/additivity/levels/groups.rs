@@ -18,10 +18,20 @@ pub(super) fn count<const A: usize, const B: usize, const F: usize>(
     features: &mut Features<F>,
 ) -> Result<(), AdditivityError> {
     for (atom, site) in skeleton.sites() {
+        let mut atoms: Vec<usize, { MAX_DEGREE + 1 }> = Vec::new();
+        let neighbours = skeleton.heavy_neighbours(atom);
+        atoms.extend(
+            neighbours
+                .map(|(n, _)| usize::from(n.atom))
+                .take(MAX_DEGREE),
+        );
+        atoms.extend([atom]);
         let fine = group(skeleton, atom, site, AtomType::token);
-        features.add(Key::new(Level::Group, &[fine]), 1.0)?;
+        let named = skeleton.heteroatoms(&atoms);
+        features.add(Key::new(Level::Group, named, &[fine]), 1.0)?;
         let coarse = group(skeleton, atom, site, AtomType::class_token);
-        features.add(Key::new(Level::GroupElements, &[coarse]), 1.0)?;
+        let among = skeleton.heteroatoms_among(&atoms);
+        features.add(Key::new(Level::GroupElements, among, &[coarse]), 1.0)?;
     }
     Ok(())
 }

@@ -7,6 +7,8 @@ mod contacts;
 mod count;
 mod groups;
 mod paths;
+mod resonance;
+mod ring_sides;
 mod rings;
 
 pub use count::{count, count_strain};

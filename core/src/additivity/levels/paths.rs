@@ -18,11 +18,14 @@ pub(super) fn geminal<const A: usize, const B: usize, const F: usize>(
             for (m, second) in skeleton.heavy_neighbours(centre) {
                 if n.atom < m.atom {
                     let [low, high] = sorted(first.kind.token(), second.kind.token());
-                    let key = Key::new(Level::Geminal, &[low, site.kind.token(), high]);
-                    features.add(key, 1.0)?;
+                    let atoms = [usize::from(n.atom), centre, usize::from(m.atom)];
+                    let named = skeleton.heteroatoms(&atoms);
+                    let tokens = [low, site.kind.token(), high];
+                    features.add(Key::new(Level::Geminal, named, &tokens), 1.0)?;
                     let [low, high] = sorted(first.kind.class_token(), second.kind.class_token());
                     let tokens = [low, site.kind.class_token(), high];
-                    features.add(Key::new(Level::GeminalElements, &tokens), 1.0)?;
+                    let among = skeleton.heteroatoms_among(&atoms);
+                    features.add(Key::new(Level::GeminalElements, among, &tokens), 1.0)?;
                 }
             }
         }
@@ -40,27 +43,27 @@ pub(super) fn near_pairs<const A: usize, const B: usize, const F: usize>(
         let [degree, hydrogens] = [site.degree, site.hydrogens].map(u64::from);
         site.kind.element_token() << 9 | aromatic << 8 | degree << 4 | hydrogens
     };
-    let key = |bonds: u64, first: Site, last: Site| {
+    let key = |bonds: u64, atoms: [usize; 2], [first, last]: [Site; 2]| {
         let [low, high] = sorted(token(first), token(last));
-        Key::new(Level::NearPair, &[bonds, low, high])
+        let among = skeleton.heteroatoms_among(&atoms);
+        Key::new(Level::NearPair, among, &[bonds, low, high])
     };
     for (centre, _) in skeleton.sites() {
         for (n, first) in skeleton.heavy_neighbours(centre) {
             for (m, last) in skeleton.heavy_neighbours(centre) {
                 if n.atom < m.atom {
-                    features.add(key(2, first, last), 1.0)?;
+                    let ends = [n.atom, m.atom].map(usize::from);
+                    features.add(key(2, ends, [first, last]), 1.0)?;
                 }
             }
         }
     }
-    for (_, ends, [first, last]) in skeleton.bonds() {
-        features.add(key(1, first, last), 1.0)?;
-        for Path {
-            sites: [first, _, _, last],
-            ..
-        } in paths(skeleton, ends)
-        {
-            features.add(key(3, first, last), 1.0)?;
+    for (_, ends, sites) in skeleton.bonds() {
+        features.add(key(1, ends, sites), 1.0)?;
+        for path in paths(skeleton, ends) {
+            let [first, .., last] = path.atoms;
+            let [first_site, .., last_site] = path.sites;
+            features.add(key(3, [first, last], [first_site, last_site]), 1.0)?;
         }
     }
     Ok(())
@@ -79,11 +82,13 @@ pub(super) fn vicinal<const A: usize, const B: usize, const F: usize>(
         }
         for path in paths(skeleton, ends) {
             let order = skeleton.order_token(bond);
-            features.add(key(Level::Vicinal, path, order, AtomType::token), 1.0)?;
-            features.add(
-                key(Level::VicinalElements, path, order, AtomType::class_token),
-                1.0,
-            )?;
+            let named = skeleton.heteroatoms(&path.atoms);
+            let fine = key(Level::Vicinal, named, path, order, AtomType::token);
+            features.add(fine, 1.0)?;
+            let among = skeleton.heteroatoms_among(&path.atoms);
+            let class = AtomType::class_token;
+            let coarse = key(Level::VicinalElements, among, path, order, class);
+            features.add(coarse, 1.0)?;
         }
     }
     Ok(())
@@ -103,7 +108,9 @@ pub(super) fn ring_vicinal<const A: usize, const B: usize, const F: usize>(
         }
         for path in paths(skeleton, ends) {
             let order = skeleton.order_token(bond) << 2 | path.ring_bonds;
-            let key = key(Level::RingVicinal, path, order, AtomType::class_token);
+            let among = skeleton.heteroatoms_among(&path.atoms);
+            let class = AtomType::class_token;
+            let key = key(Level::RingVicinal, among, path, order, class);
             features.add(key, 1.0)?;
         }
     }
@@ -137,6 +144,8 @@ pub(super) fn polar_pairs<const A: usize, const B: usize>(skeleton: &Skeleton<A,
 #[derive(Clone, Copy)]
 struct Path {
     /// The four atoms.
+    atoms: [usize; 4],
+    /// The same as sites.
     sites: [Site; 4],
     /// How many of the two outer bonds are in a non-aromatic ring.
     ring_bonds: u64,
@@ -162,6 +171,7 @@ fn paths<const A: usize, const B: usize>(
                 return None;
             };
             Some(Path {
+                atoms: [usize::from(n.atom), a, b, usize::from(m.atom)],
                 sites: [first, second, third, last],
                 ring_bonds: in_ring(n) + in_ring(m),
             })
@@ -170,12 +180,18 @@ fn paths<const A: usize, const B: usize>(
 }
 
 /// The key of a path, the same from both ends.
-fn key(level: Level, path: Path, order: u64, token: impl Fn(AtomType) -> u64) -> Key {
+fn key(
+    level: Level,
+    heteroatoms: usize,
+    path: Path,
+    order: u64,
+    token: impl Fn(AtomType) -> u64,
+) -> Key {
     let [a, b, c, d] = path.sites.map(|site| token(site.kind));
     let tokens = if [a, b] <= [d, c] {
         [a, b, c, d, order]
     } else {
         [d, c, b, a, order]
     };
-    Key::new(level, &tokens)
+    Key::new(level, heteroatoms, &tokens)
 }

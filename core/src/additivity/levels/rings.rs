@@ -18,11 +18,13 @@ pub(super) fn count<const A: usize, const B: usize, const F: usize>(
         if is_aromatic_ring(molecule, ring) || !kept(ring, keep) {
             continue;
         }
-        features.add(Key::smooth(Level::RingSize, &[], ring.len()), 1.0)?;
+        features.add(Key::smooth(Level::RingSize, ring.len()), 1.0)?;
     }
-    for (_, site) in skeleton.sites().filter(|&(i, s)| s.rings != 0 && keep(i)) {
+    for (atom, site) in skeleton.sites().filter(|&(i, s)| s.rings != 0 && keep(i)) {
+        let named = skeleton.heteroatoms(&[atom]);
         for size in sizes(site.rings) {
-            features.add(Key::new(Level::RingAtom, &[site.kind.token(), size]), 1.0)?;
+            let tokens = [site.kind.token(), size];
+            features.add(Key::new(Level::RingAtom, named, &tokens), 1.0)?;
         }
         shared(features, ATOM, site.rings)?;
     }
@@ -31,8 +33,10 @@ pub(super) fn count<const A: usize, const B: usize, const F: usize>(
         if rings != 0 && keep(ends[0]) {
             let [low, high] = sorted(a.kind.token(), b.kind.token());
             let order = skeleton.order_token(bond);
+            let named = skeleton.heteroatoms(&ends);
             for size in sizes(rings) {
-                features.add(Key::new(Level::RingBond, &[low, high, order, size]), 1.0)?;
+                let tokens = [low, high, order, size];
+                features.add(Key::new(Level::RingBond, named, &tokens), 1.0)?;
             }
             shared(features, BOND, rings)?;
         }
@@ -58,11 +62,11 @@ fn shared<const F: usize>(
     for (i, first) in sizes(rings).enumerate() {
         for second in sizes(rings).skip(i + 1) {
             let [low, high] = sorted(first, second);
-            features.add(Key::new(Level::RingJunction, &[what, low, high]), 1.0)?;
+            features.add(Key::new(Level::RingJunction, 0, &[what, low, high]), 1.0)?;
         }
     }
     if sizes(rings).nth(1).is_some() {
-        features.add(Key::new(Level::RingEnvironment, &[what, rings]), 1.0)?;
+        features.add(Key::new(Level::RingEnvironment, 0, &[what, rings]), 1.0)?;
     }
     Ok(())
 }
