@@ -186,7 +186,7 @@ fn reports_are_the_same_bytes_wherever_they_are_made() {
     for of in [
         "heat_store.toml",
         "data/measurements.csv",
-        "core/src/additivity/gas/factor.bin",
+        "core/src/additivity/fitted/factor.bin",
     ] {
         assert!(digests.contains(&of), "{of}");
     }

@@ -107,13 +107,45 @@ impl Model<'_> {
         Ok(self.assemble(features, self.value(features), explained))
     }
 
+    /// Value and uncertainty without some of the measurements.
+    ///
+    /// # Errors
+    /// [`AdditivityError::Storage`] when `workspace` is shorter than [`Model::workspace_len`].
+    pub fn estimate_without<const F: usize>(
+        &self,
+        features: &Features<F>,
+        without: &Without<'_>,
+        workspace: &mut [f64],
+    ) -> Result<Estimate, AdditivityError> {
+        let k = self.covariances(features, workspace)?;
+        let mut value = self.value(features);
+        for (&row, alpha) in without.left_out.iter().zip(without.alpha) {
+            if let Some(entry) = k.get_mut(row) {
+                value -= *entry * alpha;
+                *entry = 0.0;
+            }
+        }
+        let mut storage = [0.0; MAX_LEFT_OUT];
+        let projected = storage.get_mut(..without.left_out.len()).unwrap_or(&mut []);
+        let columns = without.columns.chunks_exact(self.len().max(1));
+        for (p, column) in projected.iter_mut().zip(columns) {
+            *p = dot(column, k);
+        }
+        solve_lower(self.covariance.factor, k);
+        solve_lower(without.block(), projected);
+        let explained = dot(k, k) - dot(projected, projected);
+        solve_upper(without.block(), projected);
+        value -= dot(projected, &without.alpha);
+        Ok(self.assemble(features, value, explained))
+    }
+
     /// Value and uncertainty without some of the measurements, and the weights of the others.
     ///
     /// The weights stand in the first [`Model::len`] numbers of `workspace`; the value is their sum times the measured values.
     ///
     /// # Errors
-    /// [`AdditivityError::Storage`] when `workspace` is shorter than [`Model::workspace_len`].
-    pub fn estimate_without<const F: usize>(
+    /// As for [`Model::estimate_without`].
+    pub fn weigh_without<const F: usize>(
         &self,
         features: &Features<F>,
         without: &Without<'_>,

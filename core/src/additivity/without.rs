@@ -1,6 +1,6 @@
 //! A model without some of its measurements.
 
-use super::cholesky::{factorise, packed_len, solve_lower, solve_upper};
+use super::cholesky::{dot, factorise, packed_len, solve_lower, solve_upper};
 use super::error::AdditivityError;
 use super::model::Model;
 
@@ -16,6 +16,8 @@ pub struct Without<'w> {
     pub(super) left_out: &'w [usize],
     /// Their columns of K⁻¹, one after the other.
     pub(super) columns: &'w [f64],
+    /// Their entries of α = K⁻¹ y.
+    pub(super) alpha: [f64; MAX_LEFT_OUT],
     /// Packed Cholesky factor of the rows and columns of K⁻¹ that belong to them.
     pub(super) block: [f64; packed_len(MAX_LEFT_OUT)],
 }
@@ -44,6 +46,7 @@ impl<'w> Without<'w> {
             needed: n * m,
             given,
         })?;
+        let mut alpha = [0.0; MAX_LEFT_OUT];
         let mut block = [0.0; packed_len(MAX_LEFT_OUT)];
         for (i, (&row, column)) in left_out
             .iter()
@@ -56,6 +59,9 @@ impl<'w> Without<'w> {
             }
             solve_lower(model.covariance.factor, column);
             solve_upper(model.covariance.factor, column);
+            if let Some(entry) = alpha.get_mut(i) {
+                *entry = dot(column, model.values);
+            }
             for (j, &other) in left_out.iter().enumerate().take(i + 1) {
                 if let (Some(entry), Some(&value)) =
                     (block.get_mut(packed_len(i) + j), column.get(other))
@@ -68,6 +74,7 @@ impl<'w> Without<'w> {
         Ok(Self {
             left_out,
             columns,
+            alpha,
             block,
         })
     }

@@ -63,9 +63,16 @@ pub struct Misfit {
 }
 
 /// The misfits among measured values, the furthest off first.
+///
+/// Predictions count to two decimals, as `data/left_out.csv` holds them, so that the list follows from that table.
 pub fn misfits(values: impl IntoIterator<Item = LeftOutValue>) -> Vec<Misfit> {
     let mut found: Vec<_> = values
         .into_iter()
+        .map(|value| LeftOutValue {
+            predicted_kj_per_mol: hundredths(value.predicted_kj_per_mol),
+            u_predicted_kj_per_mol: hundredths(value.u_predicted_kj_per_mol),
+            ..value
+        })
         .map(|value| (value.deviations(), value))
         .filter(|(deviations, _)| deviations.abs() > MISFIT_DEVIATIONS)
         .collect();
@@ -81,8 +88,8 @@ pub fn misfits(values: impl IntoIterator<Item = LeftOutValue>) -> Vec<Misfit> {
             phase: value.phase,
             source: value.source,
             measured_kj_per_mol: value.measured_kj_per_mol,
-            predicted_kj_per_mol: hundredths(value.predicted_kj_per_mol),
-            u_predicted_kj_per_mol: hundredths(value.u_predicted_kj_per_mol),
+            predicted_kj_per_mol: value.predicted_kj_per_mol,
+            u_predicted_kj_per_mol: value.u_predicted_kj_per_mol,
             u_measured_kj_per_mol: hundredths(value.u_measured_kj_per_mol),
             standard_deviations: hundredths(deviations),
         })
@@ -104,8 +111,9 @@ pub fn misfits_csv(misfits: &[Misfit]) -> Result<String, csv::Error> {
     Ok(String::from_utf8_lossy(&bytes).into_owned())
 }
 
+/// A number with two decimals, as a table prints it.
 fn hundredths(x: f64) -> f64 {
-    (100.0 * x).round() / 100.0
+    format!("{x:.2}").parse().unwrap_or(x)
 }
 
 #[cfg(test)]

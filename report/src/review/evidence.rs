@@ -74,7 +74,7 @@ impl Reviewer {
         let model = self.model;
         let estimate = match about {
             Some(about) => model.estimate_measured(features, about, without, &mut weights)?,
-            None => model.estimate_without(features, without, &mut weights)?,
+            None => model.weigh_without(features, without, &mut weights)?,
         };
         let (evidence, share) = self.evidence(&weights, estimated);
         let overall = evidence.iter().map(|row| row.resemblance.overall);
