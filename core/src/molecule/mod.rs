@@ -25,6 +25,7 @@ mod ring_systems;
 mod rings;
 mod spelling;
 mod stereo;
+mod symmetry_number;
 mod valence;
 
 pub use canonical::{CanonicalOrder, CodeRow};
