@@ -88,7 +88,11 @@ const SYMMETRY_NUMBERS: &[(&str, u64, &str)] = &[
     ("C1CC1", 6, "D3h"),
     ("C1CCC1", 8, "D4h on average"),
     ("C1CCCC1", 10, "D5h on average"),
-    ("C1CCCCC1", 12, "D6h on average; the chair has 6, and there are two"),
+    (
+        "C1CCCCC1",
+        12,
+        "D6h on average; the chair has 6, and there are two",
+    ),
     ("CC1(C)CC1", 18, "2 · 3²"),
     ("C1CC12CC2", 4, "D2d"),
     ("C1CO1", 2, "C2v"),
@@ -110,8 +114,16 @@ const SYMMETRY_NUMBERS: &[(&str, u64, &str)] = &[
     ("ClC(Cl)(Cl)Cl", 12, "Td"),
     ("FC(F)(F)C(F)(F)F", 18, "6 · 3"),
     ("ClCCl", 2, "C2v"),
-    ("O[C@H](C(=O)O)[C@@H](O)C(=O)O", 2, "one of the pair of mirror images, C2"),
-    ("O[C@H](C(=O)O)[C@H](O)C(=O)O", 1, "meso: only a mirror exchanges the halves"),
+    (
+        "O[C@H](C(=O)O)[C@@H](O)C(=O)O",
+        2,
+        "one of the pair of mirror images, C2",
+    ),
+    (
+        "O[C@H](C(=O)O)[C@H](O)C(=O)O",
+        1,
+        "meso: only a mirror exchanges the halves",
+    ),
 ];
 
 #[test]
@@ -172,7 +184,10 @@ fn entropies_and_heat_capacities_agree_with_nasa() {
                 wrong.push(format!("{} Cp {i}: {difference:.1}", row.name));
             }
         }
-        differences.push((difference.abs(), (cp.values_j_per_mol_k[1] - row.cp_400).abs()));
+        differences.push((
+            difference.abs(),
+            (cp.values_j_per_mol_k[1] - row.cp_400).abs(),
+        ));
     }
     let n = differences.len() as f64;
     let mean_s = differences.iter().map(|d| d.0).sum::<f64>() / n;
@@ -220,11 +235,16 @@ fn heat_capacities_of_unseen_molecules_are_covered() {
     };
     let fitted: std::collections::BTreeSet<_> = table
         .iter()
-        .filter(|r| r.usage == "fit" && r.cp_298_j_per_mol_k.is_some() && r.cp_800_j_per_mol_k.is_some())
+        .filter(|r| {
+            r.usage == "fit" && r.cp_298_j_per_mol_k.is_some() && r.cp_800_j_per_mol_k.is_some()
+        })
         .map(|r| key(&r.smiles))
         .collect();
     let (mut inside, mut all, mut total) = (0, 0, 0.0);
-    for row in table.iter().filter(|r| r.usage == "fit" && r.cp_800_j_per_mol_k.is_none()) {
+    for row in table
+        .iter()
+        .filter(|r| r.usage == "fit" && r.cp_800_j_per_mol_k.is_none())
+    {
         let Some(published) = row.cp_298_j_per_mol_k else {
             continue;
         };
@@ -241,7 +261,10 @@ fn heat_capacities_of_unseen_molecules_are_covered() {
             println!("{}: off by {difference:.1}, U {expanded:.1}", row.name);
         }
     }
-    println!("{inside} of {all} inside; mean {:.2} J/(mol K)", total / all as f64);
+    println!(
+        "{inside} of {all} inside; mean {:.2} J/(mol K)",
+        total / all as f64
+    );
     assert!(all >= 50, "{all}");
     // 95 % of 80 to 100, and three standard deviations of chance.
     assert!(inside * 100 >= 87 * all, "{inside} of {all}");
@@ -266,14 +289,24 @@ fn entropies_of_reaction_agree_with_nasa() {
                 .iter()
                 .map(|(number, smiles)| {
                     let row = find(smiles);
-                    let warmed = if temperature > 300.0 { row.s_600_less_s_298 } else { 0.0 };
+                    let warmed = if temperature > 300.0 {
+                        row.s_600_less_s_298
+                    } else {
+                        0.0
+                    };
                     number * (row.s_298 + warmed)
                 })
                 .sum();
             let found = estimate.at(temperature).unwrap().entropy_j_per_mol_k;
             let difference = (found.value - published).abs();
-            println!("{species:?} {temperature}: {:.1} {published:.1} U {:.1}", found.value, found.expanded);
-            assert!(difference <= found.expanded + 2.0, "{species:?}: {found:?} {published}");
+            println!(
+                "{species:?} {temperature}: {:.1} {published:.1} U {:.1}",
+                found.value, found.expanded
+            );
+            assert!(
+                difference <= found.expanded + 2.0,
+                "{species:?}: {found:?} {published}"
+            );
         }
     }
 }
@@ -285,11 +318,14 @@ fn at_the_reference_temperature_nothing_is_added_and_the_gibbs_energy_closes() {
     assert!((at.enthalpy_kj_per_mol.value - estimate.enthalpy.value_kj_per_mol).abs() < 1e-9);
     for temperature in [298.15, 450.0, 700.0] {
         let at = estimate.at(temperature).unwrap();
-        let closed = at.enthalpy_kj_per_mol.value
-            - temperature * at.entropy_j_per_mol_k.value / 1000.0;
+        let closed =
+            at.enthalpy_kj_per_mol.value - temperature * at.entropy_j_per_mol_k.value / 1000.0;
         assert!((at.gibbs_energy_kj_per_mol.value - closed).abs() < 1e-6);
         // What the heat capacity brings to both nearly cancels.
-        let apart = at.enthalpy_kj_per_mol.u.hypot(temperature * at.entropy_j_per_mol_k.u / 1000.0);
+        let apart = at
+            .enthalpy_kj_per_mol
+            .u
+            .hypot(temperature * at.entropy_j_per_mol_k.u / 1000.0);
         assert!(at.gibbs_energy_kj_per_mol.u <= apart);
     }
 }
@@ -323,14 +359,22 @@ fn ceiling_temperatures_follow_from_published_enthalpies_and_entropies() {
 
 #[test]
 fn rings_without_ceiling_and_with_a_floor_are_told_apart() {
-    let exact = |value| Interval { value, u: 0.0, expanded: 0.0 };
+    let exact = |value| Interval {
+        value,
+        u: 0.0,
+        expanded: 0.0,
+    };
     let of = |h, s| equilibrium_temperature(exact(h), exact(s), StandardState::Pure).unwrap();
     assert!(matches!(of(3.0, 30.0), Equilibrium::Floor(t) if (t.value_k - 100.0).abs() < 1e-9));
     assert_eq!(of(-3.0, 30.0), Equilibrium::Always);
     assert_eq!(of(3.0, -30.0), Equilibrium::Never);
     // Dilution lowers a ceiling.
-    let dilute = StandardState::Solution { concentration_mol_per_l: 0.1 };
-    let Ok(Equilibrium::Ceiling(thin)) = equilibrium_temperature(exact(-30.0), exact(-100.0), dilute) else {
+    let dilute = StandardState::Solution {
+        concentration_mol_per_l: 0.1,
+    };
+    let Ok(Equilibrium::Ceiling(thin)) =
+        equilibrium_temperature(exact(-30.0), exact(-100.0), dilute)
+    else {
         panic!("a ceiling");
     };
     assert!((thin.value_k - 30_000.0 / (100.0 + 8.314_462_618 * 10.0_f64.ln())).abs() < 1e-6);
@@ -341,7 +385,12 @@ fn rings_without_ceiling_and_with_a_floor_are_told_apart() {
 #[test]
 fn entropies_of_ring_opening_in_the_gas() {
     let table = nasa();
-    for (ring, size) in [("C1CC1", 3_usize), ("C1CCC1", 4), ("C1CCCC1", 5), ("C1CCCCC1", 6)] {
+    for (ring, size) in [
+        ("C1CC1", 3_usize),
+        ("C1CCC1", 4),
+        ("C1CCCC1", 5),
+        ("C1CCCCC1", 6),
+    ] {
         let chain = |n: usize| "C".repeat(n);
         let (long, short) = (chain(10 + size), chain(10));
         let mut features = counted(&[(1.0, &long), (-1.0, &short)]).increments_only();
@@ -351,6 +400,9 @@ fn entropies_of_ring_opening_in_the_gas() {
         let expected = 39.4 * size as f64 - published;
         let difference = found.values_j_per_mol_k[0] - expected;
         println!("{ring}: {:.1} {expected:.1}", found.values_j_per_mol_k[0]);
-        assert!(difference.abs() <= found.expanded_j_per_mol_k(&[1.0]) + 2.0, "{ring}: {found:?} {expected}");
+        assert!(
+            difference.abs() <= found.expanded_j_per_mol_k(&[1.0]) + 2.0,
+            "{ring}: {found:?} {expected}"
+        );
     }
 }

@@ -204,7 +204,9 @@ impl<'m, const A: usize, const B: usize> Shape<'m, A, B> {
             .map(|n| usize::from(n.atom))
             .filter(|&n| self.is_heavy(n))
             .collect();
-        ligands.sort_unstable_by_key(|&l| (self.is_end(l), self.class(l).filter(|_| self.is_end(l)), l));
+        ligands.sort_unstable_by_key(|&l| {
+            (self.is_end(l), self.class(l).filter(|_| self.is_end(l)), l)
+        });
         ligands
     }
 
@@ -235,7 +237,9 @@ impl<'m, const A: usize, const B: usize> Shape<'m, A, B> {
             let half = self.is_tetrahedral(atom) && self.has_pair(atom);
             product = product.saturating_mul(if half { all / 2 } else { all });
         }
-        let paired = self.rigid_bonds().filter(|ends| ends.iter().any(|&e| self.has_pair(e)));
+        let paired = self
+            .rigid_bonds()
+            .filter(|ends| ends.iter().any(|&e| self.has_pair(e)));
         paired.fold(product, |product, _| product / 2)
     }
 
@@ -265,9 +269,10 @@ impl<'m, const A: usize, const B: usize> Shape<'m, A, B> {
     fn row_end(&self, from: usize, to: usize) -> usize {
         let (mut from, mut to) = (from, to);
         for _ in 0..A {
-            let mut onward = self.molecule.neighbours(to).iter().filter(|n| {
-                usize::from(n.atom) != from && self.order(usize::from(n.bond)) == 2
-            });
+            let mut onward =
+                self.molecule.neighbours(to).iter().filter(|n| {
+                    usize::from(n.atom) != from && self.order(usize::from(n.bond)) == 2
+                });
             match onward.next() {
                 Some(n) if self.molecule.neighbours(to).len() == 2 => {
                     (from, to) = (to, usize::from(n.atom));

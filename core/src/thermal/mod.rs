@@ -9,5 +9,5 @@ mod reaction;
 
 pub use ceiling::{Equilibrium, EquilibriumTemperature, StandardState, equilibrium_temperature};
 pub use error::ThermalError;
-pub use interpolant::{Interpolant, LOWEST_K, HIGHEST_K, REFERENCE_K};
+pub use interpolant::{HIGHEST_K, Interpolant, LOWEST_K, REFERENCE_K};
 pub use reaction::{AtTemperature, Interval, ReactionGas};

@@ -85,10 +85,7 @@ impl Published {
         };
         let mut constitutions: BTreeMap<String, usize> = BTreeMap::new();
         let mut reader = csv::Reader::from_reader(csv_text.as_bytes());
-        for (index, record) in reader
-            .deserialize::<BTreeMap<String, String>>()
-            .enumerate()
-        {
+        for (index, record) in reader.deserialize::<BTreeMap<String, String>>().enumerate() {
             let line = index + 2;
             let record = record.map_err(|e| format!("line {line}: {e}"))?;
             let cell = |name: &str| record.get(name).map_or("", String::as_str);

@@ -122,14 +122,17 @@ pub fn search(
         }
         for contribution in 0..DEVIATIONS {
             let count = |i: usize| data.rows[i].features.deviation()[contribution] / weights[i];
-            let trace: f64 = (0..weights.len()).map(|i| count(i) * inverse[entry(i, i)]).sum();
+            let trace: f64 = (0..weights.len())
+                .map(|i| count(i) * inverse[entry(i, i)])
+                .sum();
             let quadratic = per_temperature(&|a| {
                 let squares = a.iter().enumerate().map(|(i, x)| count(i) * x * x);
                 squares.sum()
             });
             if trace > 0.0 {
                 let deviation = &mut prior.deviation_j_per_mol_k[contribution];
-                *deviation = (*deviation * (quadratic / trace).sqrt()).max(LEAST_DEVIATION_J_PER_MOL_K);
+                *deviation =
+                    (*deviation * (quadratic / trace).sqrt()).max(LEAST_DEVIATION_J_PER_MOL_K);
             }
         }
         let nu = prior.degrees_of_freedom;
@@ -209,9 +212,8 @@ fn condition(
     let mut whitened = Vec::new();
     let mut alpha = Vec::new();
     for c in 0..data.width() {
-        let value = |r: &super::PublishedRow| {
-            r.values[c] - symmetry_j_per_mol_k * r.features.ln_symmetry()
-        };
+        let value =
+            |r: &super::PublishedRow| r.values[c] - symmetry_j_per_mol_k * r.features.ln_symmetry();
         let mut y: Vec<f64> = data.rows.iter().map(value).collect();
         cholesky::solve_lower(&factor, &mut y);
         whitened.push(y.clone());

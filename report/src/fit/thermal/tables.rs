@@ -4,8 +4,8 @@ use std::collections::BTreeMap;
 use std::error::Error;
 use std::fmt::Write as _;
 
-use tautring_core::additivity::Key;
 use tautring_core::additivity::thermal::WHOLE;
+use tautring_core::additivity::{Key, Level};
 
 use super::measured::{Published, Quantity};
 use super::search::Posterior;
@@ -21,6 +21,11 @@ pub const TELLING_MEASUREMENTS: usize = 150;
 pub fn generated(fits: &[(&Published, &Posterior)]) -> Result<String, Box<dyn Error>> {
     let mut source = String::from(
         "//! Generated from `data/` by `cargo run --release --bin tautring-fit-thermal`; not edited by hand.\n\n#![cfg_attr(rustfmt, rustfmt_skip)]\n\nuse super::{Telling, ThermalModel, ThermalPrior};\n\n",
+    );
+    let _ = writeln!(
+        source,
+        "const _: () = assert!(crate::additivity::Level::ALL.len() == {});\n",
+        Level::ALL.len()
     );
     for (data, posterior) in fits {
         write(&mut source, data, posterior)?;
@@ -90,15 +95,57 @@ fn write(
     let coefficients = columns
         .iter()
         .map(|(key, column)| format!("{:?}", coefficient(prior.variance(*key), column)));
-    array(source, name, "COEFFICIENTS", &format!("[f32; {width}]"), 2, coefficients);
-    array(source, name, "STARTS", "u16", 24, starts.iter().map(u16::to_string));
-    array(source, name, "ENTRY_ROWS", "u8", 40, rows.iter().map(u8::to_string));
-    array(source, name, "COUNTS", "u8", 40, counts.iter().map(u8::to_string));
+    array(
+        source,
+        name,
+        "COEFFICIENTS",
+        &format!("[f32; {width}]"),
+        2,
+        coefficients,
+    );
+    array(
+        source,
+        name,
+        "STARTS",
+        "u16",
+        24,
+        starts.iter().map(u16::to_string),
+    );
+    array(
+        source,
+        name,
+        "ENTRY_ROWS",
+        "u8",
+        40,
+        rows.iter().map(u8::to_string),
+    );
+    array(
+        source,
+        name,
+        "COUNTS",
+        "u8",
+        40,
+        counts.iter().map(u8::to_string),
+    );
     let of_whole = taken
         .iter()
         .map(|&row| format!("{:?}", data.rows[row].features.whole()));
-    array(source, name, "WHOLE", &format!("[f64; {WHOLE}]"), 4, of_whole);
-    array(source, name, "FACTOR", "f64", 6, factor.iter().map(|x| format!("{x:?}")));
+    array(
+        source,
+        name,
+        "WHOLE",
+        &format!("[f64; {WHOLE}]"),
+        4,
+        of_whole,
+    );
+    array(
+        source,
+        name,
+        "FACTOR",
+        "f64",
+        6,
+        factor.iter().map(|x| format!("{x:?}")),
+    );
     let _ = writeln!(
         source,
         "pub(super) const {name}: ThermalModel<'static, {width}> = ThermalModel {{\n    prior: ThermalPrior {{\n        tau_j_per_mol_k: {:?},\n        whole_j_per_mol_k: {:?},\n        deviation_j_per_mol_k: {:?},\n        degrees_of_freedom: {:?},\n    }},\n    keys: &{name}_KEYS,\n    coefficients: &{name}_COEFFICIENTS,\n    whole: {whole:?},\n    symmetry_j_per_mol_k: {:?},\n    shape: {:?},\n    telling: Telling {{\n        starts: &{name}_STARTS,\n        rows: &{name}_ENTRY_ROWS,\n        counts: &{name}_COUNTS,\n        whole: &{name}_WHOLE,\n        factor: &{name}_FACTOR,\n    }},\n}};\n",

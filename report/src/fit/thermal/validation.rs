@@ -47,7 +47,9 @@ pub fn leave_out(data: &Published, posterior: &Posterior) -> Result<Vec<LeftOut>
                 let mut unit = vec![0.0; set.len()];
                 unit[at] = 1.0;
                 let published = &data.rows[row];
-                let own = posterior.prior.squared_scale(published.features.deviation());
+                let own = posterior
+                    .prior
+                    .squared_scale(published.features.deviation());
                 let tail = own + published.u_j_per_mol_k.powi(2);
                 let model = (solve(unit)[at] - posterior.noise[row]).max(0.0);
                 let spread = Estimate {
