@@ -24,7 +24,7 @@ pub fn generated(fits: &[(&Published, &Posterior)]) -> Result<String, Box<dyn Er
     );
     let _ = writeln!(
         source,
-        "const _: () = assert!(crate::additivity::Level::ALL.len() == {});\n",
+        "const _: () = assert!(super::super::Level::ALL.len() == {});\n",
         Level::ALL.len()
     );
     for (data, posterior) in fits {
