@@ -8,6 +8,7 @@ mod cycle_families;
 mod cycle_space;
 mod element;
 mod error;
+mod exchanges;
 mod formula;
 mod fragments;
 mod graph;
