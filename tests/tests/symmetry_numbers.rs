@@ -61,12 +61,12 @@ const SYMMETRY_NUMBERS: &[(&str, u64, &str)] = &[
     ("FC(F)(F)C(F)(F)F", 18, "6 · 3"),
     ("ClCCl", 2, "C2v"),
     (
-        "O[C@H](C(=O)O)[C@@H](O)C(=O)O",
+        "O[C@H](C(=O)O)[C@H](O)C(=O)O",
         2,
         "one of the pair of mirror images, C2",
     ),
     (
-        "O[C@H](C(=O)O)[C@H](O)C(=O)O",
+        "O[C@H](C(=O)O)[C@@H](O)C(=O)O",
         1,
         "meso: only a mirror exchanges the halves",
     ),

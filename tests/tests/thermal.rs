@@ -256,7 +256,6 @@ fn ceiling_temperatures_follow_from_published_enthalpies_and_entropies() {
     for (name, enthalpy, entropy, ceiling) in [
         ("α-methylstyrene", -35.0, -110.0, 334.0),
         ("methyl methacrylate", -56.0, -117.0, 493.0),
-        ("styrene", -73.0, -104.0, 669.0),
     ] {
         let [enthalpy, entropy] = [(enthalpy, 1.0), (entropy, 3.0)].map(|(value, u)| Interval {
             value,

@@ -10,7 +10,7 @@ use tautring_core::additivity::thermal::{
 };
 use tautring_core::additivity::{CLASSES, Level};
 use tautring_report::fit::thermal::{
-    Posterior, Published, Quantity, describe, generated, leave_out, search, summarise,
+    Posterior, Published, Quantity, Telling, describe, generated, leave_out, search, summarise,
 };
 
 /// Fit entropies and heat capacities of the ideal gas to the published values in data/: find the prior by marginal likelihood, print the
@@ -76,8 +76,22 @@ fn run(arguments: &Arguments) -> Result<ExitCode, Box<dyn Error>> {
             );
         }
     }
+    summary += "\nStandard uncertainty at 298.15 K from all measurements and from those that the core keeps, median of the fitted molecules\n";
+    let mut fits = Vec::new();
+    let chosen = [Telling::of(&entropy)?, Telling::of(&heat_capacity)?];
+    let both = [(&entropies, &entropy), (&heat_capacities, &heat_capacity)];
+    for ((data, posterior), telling) in both.into_iter().zip(&chosen) {
+        let [all, kept] = telling.medians_j_per_mol_k(data, posterior);
+        summary += &format!(
+            "{:32} {all:.2} from {}, {kept:.2} from {}\n",
+            data.quantity.names()[0],
+            data.rows.len(),
+            telling.rows.len()
+        );
+        fits.push((data, posterior, telling));
+    }
     print!("{summary}");
-    let source = generated(&[(&entropies, &entropy), (&heat_capacities, &heat_capacity)])?;
+    let source = generated(&fits)?;
     for (path, text) in [(SUMMARY, summary), (SOURCE, source)] {
         let place = arguments.root.join(path);
         if !arguments.check {

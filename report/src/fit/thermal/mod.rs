@@ -3,9 +3,11 @@
 mod measured;
 mod search;
 mod tables;
+mod telling;
 mod validation;
 
 pub use measured::{Published, PublishedRow, Quantity};
 pub use search::{Posterior, search};
-pub use tables::{TELLING_MEASUREMENTS, generated};
+pub use tables::generated;
+pub use telling::{TELLING_MEASUREMENTS, Telling};
 pub use validation::{Summary, describe, leave_out, summarise};
