@@ -1,6 +1,7 @@
 //! Makes the tables of entropies and heat capacities of the core from `data/`, and says how good they are.
 
 use std::error::Error;
+use std::fmt::Write as _;
 use std::path::PathBuf;
 use std::process::ExitCode;
 
@@ -70,10 +71,11 @@ fn run(arguments: &Arguments) -> Result<ExitCode, Box<dyn Error>> {
     summary += "\nWhat the symmetry number is worth in the entropy: left-out errors and logarithm of the marginal likelihood\n";
     for (name, posterior) in [("with it", &entropy), ("without", &without)] {
         if let Some(s) = summarise(&leave_out(&entropies, posterior)?) {
-            summary += &format!(
-                "{name:12} median {:.2}, mean {:.2}, ln L {:.1}\n",
+            writeln!(
+                summary,
+                "{name:12} median {:.2}, mean {:.2}, ln L {:.1}",
                 s.median_j_per_mol_k, s.mean_j_per_mol_k, posterior.log_likelihood
-            );
+            )?;
         }
     }
     summary += "\nStandard uncertainty at 298.15 K from all measurements and from those that the core keeps, median of the fitted molecules\n";
@@ -82,12 +84,13 @@ fn run(arguments: &Arguments) -> Result<ExitCode, Box<dyn Error>> {
     let both = [(&entropies, &entropy), (&heat_capacities, &heat_capacity)];
     for ((data, posterior), telling) in both.into_iter().zip(&chosen) {
         let [all, kept] = telling.medians_j_per_mol_k(data, posterior);
-        summary += &format!(
-            "{:32} {all:.2} from {}, {kept:.2} from {}\n",
+        writeln!(
+            summary,
+            "{:32} {all:.2} from {}, {kept:.2} from {}",
             data.quantity.names()[0],
             data.rows.len(),
             telling.rows.len()
-        );
+        )?;
         fits.push((data, posterior, telling));
     }
     print!("{summary}");

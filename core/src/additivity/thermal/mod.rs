@@ -4,6 +4,9 @@
 //! to the matrix C of their covariances with each other, so one factor serves them all, and any weighted sum over temperatures has its
 //! uncertainty. The counts w of the whole molecule are one, the logarithm of the molar mass, and the stereocentres. An entropy holds
 //! −R ln σ beside, with the symmetry number σ, external times internal.
+//!
+//! The tables take 460 kB, of which 322 kB are the factors of the 200 measurements of either quantity that the uncertainties rest on. From all
+//! measurements u would be smaller: the medians stand in `data/thermal_left_out.txt`.
 
 mod estimate;
 mod features;
