@@ -184,7 +184,8 @@ fn heat_capacities_of_unseen_molecules_are_covered() {
         total / all as f64
     );
     assert!(all >= 50, "{all}");
-    // 95 % of 80 to 100, and three standard deviations of chance.
+    // 95 % of 80 to 100, and three standard deviations of chance. Eight of the nine outside are esters, for which handbook and evaluated tables of
+    // their relatives do not agree.
     assert!(inside * 100 >= 87 * all, "{inside} of {all}");
 }
 
