@@ -5,7 +5,8 @@
 //!
 //! Layers, imports run downwards only:
 //!
-//! 1. [`strain`]: conventional strain of a molecule and of each of its ring systems; [`reactions`]: reactions that define strain
+//! 1. [`strain`]: conventional strain of a molecule and of each of its ring systems; [`reactions`]: reactions that define strain;
+//!    [`thermal`]: reactions at other temperatures, ceiling temperature
 //! 2. [`additivity`], [`mechanics`]: enthalpies of formation with uncertainties; angle bend and torsion
 //! 3. [`geometry`]: distance, angle and dihedral with derivatives
 //! 4. [`molecule`]: elements, the molecular graph, rings, aromaticity; [`oxygen_balance`]
@@ -22,6 +23,7 @@ pub mod oxygen_balance;
 pub mod quantities;
 pub mod reactions;
 pub mod strain;
+pub mod thermal;
 
 /// Version of this crate, for reports that state what made their numbers.
 pub const VERSION: &str = env!("CARGO_PKG_VERSION");

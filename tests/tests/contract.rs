@@ -154,6 +154,17 @@ fn complaints(row: &Row, line: &Value, blind: bool) -> Vec<String> {
         );
     }
     c.number("/oxygen_balance_percent");
+    for key in ["value", "u"] {
+        let found = c.number(&format!("/gas_entropy_j_per_mol_k/{key}"));
+        c.demand(found > 0.0, "gas_entropy_j_per_mol_k");
+    }
+    let capacities = c.list("/gas_heat_capacity_j_per_mol_k");
+    c.demand(capacities.len() == 5, "gas_heat_capacity_j_per_mol_k");
+    for entry in capacities {
+        let positive = |key: &str| entry[key].as_f64().is_some_and(|x| x > 0.0);
+        let good = positive("temperature_k") && positive("value") && positive("u");
+        c.demand(good, "gas_heat_capacity_j_per_mol_k[]");
+    }
     let evidence = c.list("/evidence");
     c.demand(!evidence.is_empty(), "evidence");
     for entry in evidence {

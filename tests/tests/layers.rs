@@ -6,7 +6,7 @@ use tautring_tests::folder::files;
 
 /// Rooms of the core from the top down; rooms of one line are neighbours that do not know each other.
 const CORE: &[&[&str]] = &[
-    &["strain", "reactions", "oxygen_balance"],
+    &["strain", "reactions", "thermal", "oxygen_balance"],
     &["additivity", "mechanics"],
     &["geometry"],
     &["molecule"],

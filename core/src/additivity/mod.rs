@@ -21,6 +21,7 @@ mod part;
 mod prior;
 mod property;
 mod skeleton;
+pub mod thermal;
 mod without;
 
 pub use covariance::Covariance;

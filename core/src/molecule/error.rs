@@ -28,6 +28,11 @@ pub enum MoleculeError {
         /// The capacity.
         capacity: usize,
     },
+    /// More exchanges of like atoms than can be gone through.
+    TooSymmetric {
+        /// How many steps were taken.
+        steps: u32,
+    },
     /// A reference to an atom that is not there.
     NoSuchAtom {
         /// The index.
@@ -96,6 +101,10 @@ impl fmt::Display for MoleculeError {
                 write!(f, "atom {} has too many neighbours", atom + 1)
             }
             Self::TooManyRings { capacity } => write!(f, "more than {capacity} relevant rings"),
+            Self::TooSymmetric { steps } => write!(
+                f,
+                "the symmetry number takes more than {steps} steps; take a smaller model compound"
+            ),
             Self::NoSuchAtom { atom } => write!(f, "there is no atom {}", atom + 1),
             Self::NoSuchBond { bond } => write!(f, "there is no bond {}", bond + 1),
             Self::SelfBond { atom } => write!(f, "atom {} is bonded to itself", atom + 1),

@@ -8,6 +8,7 @@ mod cycle_families;
 mod cycle_space;
 mod element;
 mod error;
+mod exchanges;
 mod formula;
 mod fragments;
 mod graph;
@@ -25,6 +26,7 @@ mod ring_systems;
 mod rings;
 mod spelling;
 mod stereo;
+mod symmetry_number;
 mod valence;
 
 pub use canonical::{CanonicalOrder, CodeRow};

@@ -6,7 +6,7 @@ use tautring_report::document::rounding::{fixed, rounded};
 use tautring_report::document::subscripted;
 use tautring_report::review::{
     Agreement, Basis, Comparison, Evidence, FormationEnthalpy, Quantity, SubstanceReview,
-    TELLING_KJ_PER_MOL, phase_word,
+    TELLING_KJ_PER_MOL, ThermalValue, phase_word,
 };
 
 /// What the signs mean; stands once under all cards.
@@ -43,6 +43,7 @@ pub(super) fn card(place: &str, review: &SubstanceReview) -> String {
     ] {
         formation(phase, enthalpy, &mut line);
     }
+    thermal(review, &mut line);
     strain(review, &mut line);
     conventions(review, &mut line);
     line(
@@ -77,6 +78,21 @@ fn formation(phase: &str, enthalpy: &FormationEnthalpy, line: &mut impl FnMut(&s
     if enthalpy.basis == Basis::Measured {
         line("    estimate", with_factor(enthalpy.estimate));
     }
+}
+
+/// Entropy, and the heat capacity from the lowest to the highest temperature.
+fn thermal(review: &SubstanceReview, line: &mut impl FnMut(&str, String)) {
+    let Some(thermal) = &review.gas_thermal else {
+        return;
+    };
+    let printed = |value: &ThermalValue| {
+        let interval = rounded(value.value_j_per_mol_k, value.expanded_j_per_mol_k).interval();
+        format!("{interval} J/(mol K) at {} K", value.temperature_k)
+    };
+    line("entropy", printed(&thermal.entropy));
+    let ends = [thermal.heat_capacity.first(), thermal.heat_capacity.last()];
+    let ends: Vec<_> = ends.into_iter().flatten().map(printed).collect();
+    line("heat capacity", ends.join(", "));
 }
 
 fn strain(review: &SubstanceReview, line: &mut impl FnMut(&str, String)) {

@@ -23,6 +23,7 @@ pub mod rounding;
 mod strain;
 mod substance;
 mod summary;
+mod thermal;
 
 pub use bibliography::{Bibliography, Citations, Reference};
 pub use block::{Align, Block, Column, Document, Figure, Note, NoteKind, Table};

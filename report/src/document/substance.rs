@@ -7,7 +7,7 @@ use super::entry::{Entry, Particulars};
 use super::inline::{Inline, subscripted};
 use super::report::{heading, particulars_table};
 use super::rounding::{fixed, rounded};
-use super::{blocks_from_markdown, condensed, conventions, formation, strain};
+use super::{blocks_from_markdown, condensed, conventions, formation, strain, thermal};
 use crate::review::{Quantity, RingStrain, SubstanceReview, UNSTATED_KJ_PER_MOL};
 
 /// Strain of a ring system from which on its bonds are marked in the drawing, kJ/mol: cyclohexane stays unmarked, cyclopentane does not.
@@ -44,6 +44,7 @@ pub(super) fn blocks(index: usize, entry: &Entry, citations: &mut Citations) -> 
         blocks.extend(condensed::blocks(review, citations));
         blocks.extend(strain::blocks(review));
         blocks.extend(conventions::blocks(review, citations));
+        blocks.extend(thermal::blocks(review));
         if !review.flags.is_empty() {
             blocks.push(heading(4, "Flags"));
             blocks.push(Block::List {

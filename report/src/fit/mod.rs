@@ -7,6 +7,7 @@ mod inference;
 mod matrix;
 mod misfits;
 mod tables;
+pub mod thermal;
 mod validation;
 mod worth;
 

@@ -148,6 +148,7 @@ fn review(name: &str, smiles: &str, comparisons: Vec<Comparison>) -> SubstanceRe
         gas: formation(comparisons),
         liquid: formation(Vec::new()),
         solid: formation(Vec::new()),
+        gas_thermal: None,
         strain: Strain {
             quantity: quantity(115.6, 1.3),
             value_kcal_per_mol: 27.63,
@@ -336,6 +337,9 @@ fn json_holds_the_keys_that_other_programs_rely_on() {
             "formula",
             "molar_mass_g_per_mol",
             "enthalpy_of_formation",
+            "gas_entropy_j_per_mol_k",
+            "gas_heat_capacity_j_per_mol_k",
+            "symmetry_number",
             "strain",
             "strain_conventions",
             "rings",

@@ -5,6 +5,8 @@ use tautring_core::additivity::{Grade, Share, Support};
 
 use crate::fit::Misfit;
 
+use super::thermal::GasThermal;
+
 /// A value with its uncertainty, kJ/mol.
 #[derive(Clone, Copy, Debug, PartialEq, Serialize)]
 pub struct Quantity {
@@ -275,6 +277,8 @@ pub struct SubstanceReview {
     pub liquid: FormationEnthalpy,
     /// Enthalpy of formation of the crystal.
     pub solid: FormationEnthalpy,
+    /// Entropy and heat capacity of the ideal gas, if they can be estimated.
+    pub gas_thermal: Option<GasThermal>,
     /// Strain.
     pub strain: Strain,
     /// The strain of each ring system by several conventions.

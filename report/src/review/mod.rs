@@ -11,6 +11,7 @@ mod known;
 mod measured;
 mod reviewer;
 mod stated;
+mod thermal;
 mod warnings;
 
 pub use check_values::{CheckValueError, check_values};
@@ -21,4 +22,5 @@ pub use findings::{
 };
 pub use measured::{CaseMeasurement, Settled, UNSTATED_KJ_PER_MOL};
 pub use reviewer::{ReviewError, Reviewer};
+pub use thermal::{GasThermal, ThermalValue};
 pub use warnings::LEANING_WEIGHT;

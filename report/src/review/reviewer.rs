@@ -19,6 +19,7 @@ use super::evidence::Estimated;
 use super::findings::{Basis, FormationEnthalpy, Quantity, RingStrain, Strain, SubstanceReview};
 use super::known::Known;
 use super::measured::{CaseMeasurement, choose, compare};
+use super::thermal::thermal;
 use super::warnings::{self, Warned};
 use crate::dataset::{Dataset, DatasetError, HostFeatures};
 use crate::structure::{HostMolecule, Structure, diastereomer, skeleton};
@@ -206,6 +207,7 @@ impl Reviewer {
             gas,
             liquid,
             solid,
+            gas_thermal: thermal(molecule),
             strain,
             strain_conventions,
             rings: molecule
