@@ -1,6 +1,13 @@
 //! Symmetry numbers of known molecules.
 
+use std::collections::BTreeSet;
+
+use serde::Deserialize;
 use tautring_report::structure::Structure;
+use tautring_tests::folder::{reference, top};
+use tautring_tests::random::XorShift;
+use tautring_tests::renumber::renumber;
+use tautring_tests::table::rows;
 
 /// External times internal symmetry numbers, from the point group and the rotors as in `benson-1976`; by hand.
 const SYMMETRY_NUMBERS: &[(&str, u64, &str)] = &[
@@ -83,5 +90,40 @@ fn symmetry_numbers_are_those_of_the_point_group_and_the_rotors() {
             (found != Ok(expected)).then(|| format!("{smiles}: {found:?}, not {expected} ({why})"))
         })
         .collect();
+    assert!(wrong.is_empty(), "{}", wrong.join("\n"));
+}
+
+#[derive(Deserialize)]
+struct Row {
+    smiles: String,
+}
+
+/// Every structure of the data, and those of the varied ones that can be read, in three other orders of their atoms.
+#[test]
+fn symmetry_numbers_do_not_depend_on_the_order_of_the_atoms() {
+    let tables = [
+        top().join("data/measurements.csv"),
+        top().join("data/gas_entropies.csv"),
+        reference("varied.csv"),
+    ];
+    let all = tables.iter().flat_map(|path| rows::<Row>(path));
+    let all: BTreeSet<String> = all.map(|row| row.smiles).collect();
+    let mut random = XorShift::new(7);
+    let mut checked = 0;
+    let mut wrong = Vec::new();
+    for smiles in all {
+        let Ok(structure) = Structure::from_smiles(&smiles) else {
+            continue;
+        };
+        let first = structure.molecule.symmetry_number();
+        for _ in 0..3 {
+            let other = renumber(&structure.molecule, &mut random).symmetry_number();
+            if first.is_err() || first != other {
+                wrong.push(format!("{smiles}: {first:?}, {other:?}"));
+            }
+        }
+        checked += 1;
+    }
+    assert!(checked > 3000, "{checked}");
     assert!(wrong.is_empty(), "{}", wrong.join("\n"));
 }

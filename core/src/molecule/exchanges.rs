@@ -97,7 +97,8 @@ impl<const A: usize, const B: usize> Shape<'_, A, B> {
             let in_place = number >= fixed || to == centre;
             let ordered = match marks {
                 [Some(one), Some(other)] => kept == (one == other),
-                _ => number >= fixed || kept,
+                // No rotation swaps ligands around an atom that stays where it is.
+                _ => to != centre || kept,
             };
             in_place && ordered
         }) && self.rigid_bonds().all(|[a, b]| {

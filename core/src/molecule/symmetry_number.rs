@@ -5,7 +5,8 @@
 //! ligands that are ends (hydrogens, halogens, methyl groups) are counted atom by atom; the exchanges of the other atoms are gone through, in [`super::exchanges`].
 //!
 //! It rests on the graph, not on a conformer: a ring counts as it is on average (12 for cyclohexane, whose chair has 6 but two chairs), and
-//! unmarked centres that a symmetry could exchange count as having the configuration that allows it.
+//! unmarked centres that a symmetry could exchange count as having the configuration that allows it. For a few cages with unmarked centres, in
+//! which that choice is not free, the number may be off by a small factor: R ln 2 or so, which the uncertainty of an entropy bears.
 //!
 //! # Source
 //! `benson-1976`.
@@ -38,9 +39,13 @@ impl<const A: usize, const B: usize> Molecule<A, B> {
     /// [`MoleculeError::TooSymmetric`] when the exchanges are too many to go through.
     pub fn symmetry_number(&self) -> Result<u64, MoleculeError> {
         let classes = self.symmetry_classes();
-        let shape = Shape::new(self, &classes);
+        let mut shape = Shape::new(self, &classes);
         let mut exchanges = 1;
         if shape.has_like_cores() {
+            // So that the result is the same for every order of the atoms, whatever the configuration of unmarked centres.
+            let ranks = self.canonical_order().ranks;
+            let rank = |&atom: &u16| ranks.get(usize::from(atom)).copied();
+            shape.centres.sort_unstable_by_key(rank);
             let mut steps = 0;
             // Orbit by orbit: where the first centre can go, then the second with the first in its place, and so on.
             for fixed in 0..=shape.centres.len() {
