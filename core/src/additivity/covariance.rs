@@ -36,7 +36,7 @@ impl Covariance<'_> {
         self.rows.is_empty()
     }
 
-    /// How many numbers [`Covariance::explained`] works in.
+    /// How many numbers an estimate works in.
     pub const fn workspace_len(&self) -> usize {
         self.len() + self.molecule_count
     }
