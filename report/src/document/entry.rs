@@ -5,7 +5,7 @@ use tautring_core::quantities::MolarMass;
 
 use super::rounding::fixed;
 use crate::case::{
-    Crucible, Measurement, Phase, Portion, Record, StructureSource, Subject, Substance, Vocabulary,
+    Crucible, Measurement, Portion, Record, StructureSource, Subject, Substance, Vocabulary,
 };
 use crate::review::{CaseMeasurement, Reviewer, SubstanceReview};
 
@@ -157,10 +157,7 @@ impl Stated {
             uncertainty: uncertainty.map(|(u, k)| format!("{u} {} (k = {k})", written.unit)),
             source: measurement.source.clone(),
             note: measurement.note.clone(),
-            compared: matches!(
-                measurement.subject,
-                Subject::EnthalpyOfFormation { phase: Phase::Gas }
-            ),
+            compared: matches!(measurement.subject, Subject::EnthalpyOfFormation { .. }),
         }
     }
 }

@@ -83,7 +83,7 @@ fn stated(particulars: &Particulars) -> Vec<Block> {
         heading(4, "Measured values of the case"),
         Block::Table(Table {
             caption: format!(
-                "Measured values as the case file states them. Gas-phase enthalpies of formation are compared with the estimate; one without a stated uncertainty counts with u = {} kJ/mol, that of a handbook value. The others are shown only.",
+                "Measured values as the case file states them. Enthalpies of formation are compared with the estimate for their phase; one without a stated uncertainty counts with u = {} kJ/mol, that of a handbook value. The others are shown only.",
                 fixed(UNSTATED_KJ_PER_MOL, 1)
             )
             .into(),
