@@ -19,7 +19,7 @@ An estimate is no substitute for calorimetry. Local codes and the judgement of a
 
 /// Strain energies and enthalpies of formation of ring molecules, with uncertainties and the measurements they rest on.
 ///
-/// Estimates come from an additivity that was fitted to published gas-phase enthalpies of formation at 298.15 K. Every number carries
+/// Estimates come from an additivity that was fitted to published enthalpies of formation, vaporisation and sublimation at 298.15 K. Every number carries
 /// its uncertainty, and every estimate the list of measured compounds that it leans on.
 #[derive(Parser)]
 #[command(name = "tautring", version, after_help = EXIT_CODES, arg_required_else_help = true)]

@@ -22,7 +22,7 @@ Examples:
 
 Exit codes: 0 fine; 2 a structure could not be read or estimated (the others are still written).";
 
-/// Estimate the gas-phase enthalpy of formation and the ring strain of structures.
+/// Estimate the enthalpies of formation (gas, liquid, crystal) and the ring strain of structures.
 ///
 /// For each structure: formula and molar mass; the enthalpy of formation at 298.15 K with its expanded uncertainty U (95 %), measured
 /// values beside the estimate that was made without them; the strain in kJ/mol, kcal/mol and J/g, in total and for each ring system; the
